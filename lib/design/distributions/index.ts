@@ -3,5 +3,5 @@ export { binomialCdf, binomialProbability, binomialSurvival } from './binomial';
 export { gaussLegendreRule, integrate } from './gauss-legendre';
 export { logGamma } from './log-gamma';
 export { expit, logit, logOnePlusExp } from './logistic';
-export { normalCdf, normalDensity, normalQuantile } from './normal';
+export { inverseMillsRatio, logNormalCdf, normalCdf, normalDensity, normalQuantile } from './normal';
 export { bivariateNormalEqual, owensT } from './owens-t';

@@ -93,6 +93,29 @@ export function normalDensity(x: number): number {
   return y > 40 ? 0 : ONE_OVER_SQRT_2PI * gaussianKernel(y);
 }
 
+/**
+ * φ(x)/Φ(x), the derivative of ln Φ(x); finite for every finite x.
+ *
+ * @param x any number.
+ * Source: below −30 the continued fraction t + 1/(t + 2/(t + 3/(t + …))), t = −x (DLMF 7.9.3).
+ */
+export function inverseMillsRatio(x: number): number {
+  if (x >= -30) return normalDensity(x) / normalCdf(x);
+  const t = -x;
+  return t + 1 / (t + 2 / (t + 3 / (t + 4 / (t + 5 / t))));
+}
+
+/**
+ * ln Φ(x), finite for every finite x.
+ *
+ * @param x any number.
+ */
+export function logNormalCdf(x: number): number {
+  if (x > 5) return Math.log1p(-normalCdf(-x));
+  if (x >= -30) return Math.log(normalCdf(x));
+  return -0.5 * x * x + Math.log(ONE_OVER_SQRT_2PI) - Math.log(inverseMillsRatio(x));
+}
+
 /** Σ coefficients[i]·r^i by Horner's rule, the coefficients in ascending order. */
 function polynomial(coefficients: readonly number[], r: number): number {
   let sum = 0;
