@@ -1,0 +1,27 @@
+import type { NextConfig } from 'next';
+
+const everyAnswer = [
+  { key: 'X-Content-Type-Options', value: 'nosniff' },
+  { key: 'X-Frame-Options', value: 'DENY' },
+  { key: 'Referrer-Policy', value: 'strict-origin-when-cross-origin' },
+  { key: 'Cross-Origin-Opener-Policy', value: 'same-origin' },
+  { key: 'Cross-Origin-Resource-Policy', value: 'same-origin' },
+  { key: 'X-Permitted-Cross-Domain-Policies', value: 'none' },
+  {
+    key: 'Permissions-Policy',
+    value: 'camera=(), microphone=(), geolocation=(), payment=(), usb=(), browsing-topics=()',
+  },
+];
+
+const nextConfig: NextConfig = {
+  reactStrictMode: true,
+  poweredByHeader: false,
+  serverExternalPackages: ['sequelize', 'mariadb', 'piscina', '@node-rs/argon2', 'pino'],
+  experimental: {
+    serverActions: { bodySizeLimit: '1mb' },
+    proxyClientMaxBodySize: '2mb',
+  },
+  headers: async () => [{ source: '/:path*', headers: everyAnswer }],
+};
+
+export default nextConfig;
