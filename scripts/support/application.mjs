@@ -1,0 +1,84 @@
+import net from 'node:net';
+import path from 'node:path';
+import { read, pause } from './processes.mjs';
+import { spawnPart } from './parts.mjs';
+
+const LONGEST_START_MS = 60_000;
+
+/** Waits until the web server takes connections, or says that it ended first. */
+async function untilItAnswers(child, port) {
+  const giveUpAt = Date.now() + LONGEST_START_MS;
+  while (Date.now() < giveUpAt) {
+    if (child.exitCode !== null || child.signalCode !== null) {
+      throw new Error(`it ended while starting (${child.signalCode ?? child.exitCode})`);
+    }
+    const answers = await new Promise((resolve) => {
+      const socket = net.connect({ port, host: 'localhost' }, () => {
+        socket.destroy();
+        resolve(true);
+      });
+      socket.once('error', () => resolve(false));
+    });
+    if (answers) return;
+    await pause(50);
+  }
+  throw new Error('it did not answer within a minute');
+}
+
+/**
+ * Starts the web server and waits until it answers.
+ * @param root the project's folder
+ * @param env its environment: DATABASE_URL, PORT, NEXTAUTH_SECRET …
+ * @param options.isDevelopment the development server instead of the production build
+ */
+export async function startWeb(root, env, { isDevelopment = false } = {}) {
+  const preload = path.join(root, 'scripts/support/exit-with-parent.mjs');
+  const next = path.join(root, 'node_modules/next/dist/bin/next');
+  const host = env.STEPWELL_HOST ? ['--hostname', env.STEPWELL_HOST] : [];
+  const child = spawnPart(
+    process.execPath,
+    ['--import', preload, next, isDevelopment ? 'dev' : 'start', '--port', env.PORT, ...host],
+    {
+      cwd: root,
+      env: { ...env, NODE_ENV: isDevelopment ? 'development' : 'production', NEXT_TELEMETRY_DISABLED: '1' },
+      prefix: 'web',
+    },
+  );
+  await untilItAnswers(child, Number(env.PORT));
+  return child;
+}
+
+/** Starts the worker and waits until it says that it is ready. */
+export async function startWorker(root, env) {
+  const preload = path.join(root, 'scripts/support/exit-with-parent.mjs');
+  const child = spawnPart(
+    process.execPath,
+    ['--import', preload, '--import', 'tsx', path.join(root, 'lib/worker/main.ts')],
+    { cwd: root, env: { ...env, NODE_ENV: 'production' }, prefix: 'worker' },
+  );
+  await new Promise((resolve, reject) => {
+    child.once('message', resolve);
+    child.once('error', reject);
+    child.once('exit', (code, signal) => reject(new Error(`it ended while starting (${signal ?? code})`)));
+  });
+  return child;
+}
+
+/**
+ * Migrates a database, marks and fills a new one (scripts/prepare-database.ts).
+ * @returns what that script printed as its last line, parsed
+ */
+export async function prepareDatabase(root, env, { kind, isPrivate, children }) {
+  const printed = await read(
+    process.execPath,
+    [
+      '--import',
+      'tsx',
+      path.join(root, 'scripts/prepare-database.ts'),
+      kind,
+      isPrivate ? 'private' : 'given',
+    ],
+    { cwd: root, env: { ...env, NODE_ENV: 'production' }, children },
+  );
+  return JSON.parse(printed.trim().split('\n').at(-1));
+}
