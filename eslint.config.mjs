@@ -35,6 +35,7 @@ const rooms = {
       'lib/env',
       'lib/log',
       'lib/auth',
+      'lib/queries',
     ],
     packages: ['^next', '^react'],
   },
@@ -49,9 +50,8 @@ const rooms = {
       'lib/errors',
       'lib/env',
       'lib/log',
-      'lib/commands',
     ],
-    packages: ['^react'],
+    packages: [],
   },
   'lib/server': {
     may: [

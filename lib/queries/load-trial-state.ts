@@ -1,0 +1,186 @@
+import { QueryTypes } from 'sequelize';
+import type {
+  Cohort,
+  DesignVersion,
+  Halt,
+  Member,
+  RecommendationRow,
+  Release,
+  Signature,
+  Subject,
+  TrialFacts,
+  TrialSite,
+  TrialState,
+} from '@/lib/conduct/state';
+import { database } from '@/lib/db/connection';
+import { designSchema } from '@/lib/schemas/design';
+import { columnsOf, entityOf, type RawRow } from './rows';
+
+/** A person of the trial, as pages and mails name them. */
+export interface DirectoryEntry {
+  readonly personId: string;
+  readonly printedName: string;
+  readonly email: string;
+  readonly isActive: boolean;
+}
+
+/** A site of the trial, as pages and mails name it. */
+export interface SiteEntry {
+  readonly siteId: string;
+  readonly code: string;
+  readonly name: string;
+  readonly timeZone: string;
+}
+
+/** A trial's state with the names that belong to its ids. */
+export interface LoadedTrial {
+  readonly state: TrialState;
+  readonly people: Readonly<Record<string, DirectoryEntry>>;
+  readonly sites: Readonly<Record<string, SiteEntry>>;
+  /** Counts every command of the trial; a page says with it what it was drawn from. */
+  readonly version: number;
+}
+
+export interface LoadOptions {
+  /** Also the stored texts of every recommendation and signature, not only of the awaiting recommendation. */
+  readonly withTexts?: boolean;
+}
+
+function byId<T extends { id: string }>(entities: Iterable<T | null>): Record<string, T> {
+  const found: Record<string, T> = {};
+  for (const entity of entities) if (entity !== null) found[entity.id] = entity;
+  return found;
+}
+
+/**
+ * Loads the state of a trial in five statements, whatever the number of cohorts and subjects.
+ * @param trialId the trial's id; throws when there is no such trial
+ */
+export async function loadTrialState(trialId: string, options: LoadOptions = {}): Promise<LoadedTrial> {
+  const { sequelize, models } = database();
+  const select = (sql: string): Promise<RawRow[]> =>
+    sequelize.query(sql, { type: QueryTypes.SELECT, replacements: { trialId } });
+  const m = models;
+
+  const textColumns = options.withTexts
+    ? 'r.record AS r__record, g.signed_text AS g__signedText'
+    : `CASE WHEN r.state = 'awaiting' THEN r.record ELSE '' END AS r__record, '' AS g__signedText`;
+
+  const trialRows = await select(`
+    SELECT ${columnsOf(m.Trial, 't')}, ${columnsOf(m.DesignVersion, 'v')}, ${columnsOf(m.Halt, 'h')}
+    FROM trials t
+    LEFT JOIN design_versions v ON v.trial_id = t.id
+    LEFT JOIN halts h ON h.trial_id = t.id
+    WHERE t.id = :trialId`);
+  const memberRows = await select(`
+    SELECT ${columnsOf(m.Membership, 'm')}, p.printed_name, p.email, p.state AS person_state, s.site_id
+    FROM memberships m
+    JOIN people p ON p.id = m.person_id
+    LEFT JOIN membership_sites s ON s.membership_id = m.id
+    WHERE m.trial_id = :trialId`);
+  const siteRows = await select(`
+    SELECT ${columnsOf(m.TrialSite, 'x')}, s.code, s.name, s.time_zone
+    FROM trial_sites x JOIN sites s ON s.id = x.site_id
+    WHERE x.trial_id = :trialId`);
+  const cohortRows = await select(`
+    SELECT ${columnsOf(m.Cohort, 'c')}, ${columnsOf(m.Release, 'e')}, ${columnsOf(m.Subject, 's')}
+    FROM cohorts c
+    JOIN releases e ON e.id = c.release_id
+    LEFT JOIN subjects s ON s.cohort_id = c.id
+    WHERE c.trial_id = :trialId`);
+  const recommendationRows = await select(`
+    SELECT ${columnsOf(m.Recommendation, 'r', ['record'])}, ${columnsOf(m.Signature, 'g', ['signedText'])}, ${textColumns}
+    FROM signatures g
+    LEFT JOIN recommendations r ON r.id = g.recommendation_id
+    WHERE g.trial_id = :trialId
+    UNION ALL
+    SELECT ${columnsOf(m.Recommendation, 'r', ['record'])}, ${columnsOf(m.Signature, 'g', ['signedText'])}, ${textColumns}
+    FROM recommendations r
+    LEFT JOIN signatures g ON FALSE
+    WHERE r.trial_id = :trialId`);
+
+  const first = trialRows[0];
+  if (first === undefined) throw new Error(`There is no trial ${trialId}.`);
+  const trial = entityOf<
+    TrialFacts & { version: number; chainSequence: number; chainHead: string; chainTime: string }
+  >(m.Trial, 't', first);
+  if (trial === null) throw new Error(`There is no trial ${trialId}.`);
+  const { version, chainSequence: _sequence, chainHead: _head, chainTime: _time, ...facts } = trial;
+
+  const members: Record<string, Member> = {};
+  const people: Record<string, DirectoryEntry> = {};
+  for (const row of memberRows) {
+    const member = entityOf<Member & { trialId: string }>(m.Membership, 'm', row);
+    if (member === null) continue;
+    const { trialId: _trialId, ...rest } = member;
+    const siteIds = members[member.personId]?.siteIds ?? [];
+    members[member.personId] = {
+      ...rest,
+      siteIds: row.site_id ? [...siteIds, String(row.site_id)].sort() : siteIds,
+    };
+    people[member.personId] = {
+      personId: member.personId,
+      printedName: String(row.printed_name),
+      email: String(row.email),
+      isActive: row.person_state === 'active',
+    };
+  }
+
+  const trialSites: Record<string, TrialSite> = {};
+  const sites: Record<string, SiteEntry> = {};
+  for (const row of siteRows) {
+    const site = entityOf<TrialSite & { trialId: string }>(m.TrialSite, 'x', row, 'siteId');
+    if (site === null) continue;
+    trialSites[site.siteId] = { siteId: site.siteId, state: site.state };
+    sites[site.siteId] = {
+      siteId: site.siteId,
+      code: String(row.code),
+      name: String(row.name),
+      timeZone: String(row.time_zone),
+    };
+  }
+
+  const entities = <T extends { id: string }>(
+    model: Parameters<typeof entityOf>[0],
+    alias: string,
+    rows: readonly RawRow[],
+  ): Record<string, T> =>
+    byId(
+      rows.map((row) => {
+        const entity = entityOf<T & { trialId?: string }>(model, alias, row);
+        if (entity === null) return null;
+        const { trialId: _trialId, ...rest } = entity;
+        return rest as unknown as T;
+      }),
+    );
+
+  const storedVersions = entities<Omit<DesignVersion, 'design'> & { design: string }>(
+    m.DesignVersion,
+    'v',
+    trialRows,
+  );
+  const designVersions = byId(
+    Object.values(storedVersions).map((stored) => ({
+      ...stored,
+      design: designSchema.parse(JSON.parse(stored.design)),
+    })),
+  );
+
+  return {
+    state: {
+      trial: facts,
+      sites: trialSites,
+      members,
+      designVersions,
+      recommendations: entities<RecommendationRow>(m.Recommendation, 'r', recommendationRows),
+      releases: entities<Release>(m.Release, 'e', cohortRows),
+      cohorts: entities<Cohort>(m.Cohort, 'c', cohortRows),
+      subjects: entities<Subject>(m.Subject, 's', cohortRows),
+      halts: entities<Halt>(m.Halt, 'h', trialRows),
+      signatures: entities<Signature>(m.Signature, 'g', recommendationRows),
+    },
+    people,
+    sites,
+    version,
+  };
+}
