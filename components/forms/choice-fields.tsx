@@ -2,14 +2,8 @@
 
 import type { ReactNode } from 'react';
 import { useFormContext } from 'react-hook-form';
-import {
-  controlClass,
-  describedBy,
-  FieldError,
-  FieldFrame,
-  useFieldError,
-  type FieldProps,
-} from './field-frame';
+import { controlClass } from './control-class';
+import { describedBy, FieldError, FieldFrame, useFieldError, type FieldProps } from './field-frame';
 import { useFieldFacts } from './form-context';
 
 /** One of the values a person may choose. */
@@ -88,8 +82,9 @@ function Group({
   );
 }
 
-const markClass =
-  'mt-0.75 size-4.5 flex-none cursor-pointer border-2 border-ink-soft accent-water disabled:cursor-not-allowed';
+const radioClass =
+  'mt-0.75 size-4.5 flex-none cursor-pointer appearance-none rounded-full border-2 border-ink-soft bg-paper checked:border-[5.5px] checked:border-water disabled:cursor-not-allowed disabled:border-line print:appearance-auto';
+const checkboxClass = 'mt-0.75 size-4.5 flex-none cursor-pointer accent-water disabled:cursor-not-allowed';
 
 function ChoiceLine({ choice, control, plain }: { choice: Choice; control: ReactNode; plain: boolean }) {
   return (
@@ -133,7 +128,7 @@ export function RadioGroup(props: FieldProps & { choices: Choice[]; inline?: boo
                 type="radio"
                 value={choice.value}
                 disabled={disabled || Boolean(choice.disabledReason)}
-                className={markClass}
+                className={radioClass}
               />
             }
           />
@@ -162,7 +157,7 @@ export function CheckboxGroup(props: FieldProps & { choices: Choice[] }) {
               type="checkbox"
               value={choice.value}
               disabled={disabled || Boolean(choice.disabledReason)}
-              className={markClass}
+              className={checkboxClass}
             />
           }
         />
@@ -184,7 +179,7 @@ export function Checkbox({ name, label, help, disabled }: Omit<FieldProps, 'opti
           id={elementId}
           type="checkbox"
           disabled={disabled}
-          className={markClass}
+          className={checkboxClass}
           {...describedBy(elementId, help, error)}
         />
         <span>{label}</span>

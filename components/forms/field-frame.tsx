@@ -36,13 +36,6 @@ export function describedBy(elementId: string, help: ReactNode, error: string | 
   return { 'aria-describedby': ids || undefined, 'aria-invalid': error ? true : undefined };
 }
 
-/** The classes of a text-like control. */
-export function controlClass(error: string | undefined): string {
-  return `min-h-10 w-full rounded-sm border bg-paper px-2.5 py-2 text-ink placeholder:text-ink-soft disabled:bg-stone disabled:text-ink-soft ${
-    error ? 'border-brick outline-1 outline-brick' : 'border-ink-soft'
-  }`;
-}
-
 /** The sentence that refuses a field, tied to it by its id. */
 export function FieldError({ elementId, error }: { elementId: string; error: string | undefined }) {
   if (!error) return null;

@@ -2,7 +2,8 @@
 
 import type { ComponentProps } from 'react';
 import { useFormContext } from 'react-hook-form';
-import { controlClass, describedBy, FieldFrame, useFieldError, type FieldProps } from './field-frame';
+import { controlClass } from './control-class';
+import { describedBy, FieldFrame, useFieldError, type FieldProps } from './field-frame';
 import { useFieldFacts } from './form-context';
 
 type Inherited = Pick<

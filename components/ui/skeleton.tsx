@@ -1,0 +1,44 @@
+/** Lines of text that are on their way. */
+export function SkeletonText({ lines = 3 }: { lines?: number }) {
+  return (
+    <div role="status" className="grid animate-pulse gap-2.5 py-1">
+      <span className="sr-only">Loading</span>
+      {Array.from({ length: lines }, (_, line) => (
+        <span
+          key={line}
+          aria-hidden="true"
+          className={`h-3.5 rounded-sm bg-line/60 ${line === lines - 1 ? 'w-2/3' : 'w-full max-w-prose'}`}
+        />
+      ))}
+    </div>
+  );
+}
+
+/** A table that is on its way, with its number of rows and columns. */
+export function SkeletonTable({ rows = 5, columns = 4 }: { rows?: number; columns?: number }) {
+  return (
+    <div role="status" className="animate-pulse">
+      <span className="sr-only">Loading</span>
+      {Array.from({ length: rows + 1 }, (_, row) => (
+        <div
+          key={row}
+          aria-hidden="true"
+          className={`flex gap-6 py-2.75 ${row === 0 ? 'border-b border-ink-soft' : 'border-b border-line'}`}
+        >
+          {Array.from({ length: columns }, (_, column) => (
+            <span key={column} className="h-3.5 flex-1 rounded-sm bg-line/60" />
+          ))}
+        </div>
+      ))}
+    </div>
+  );
+}
+
+/** A drawing or chart that is on its way. */
+export function SkeletonFigure() {
+  return (
+    <div role="status" className="aspect-[9/4] w-full animate-pulse rounded-sm bg-line/40">
+      <span className="sr-only">Loading</span>
+    </div>
+  );
+}
