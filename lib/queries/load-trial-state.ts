@@ -52,14 +52,18 @@ function byId<T extends { id: string }>(entities: Iterable<T | null>): Record<st
   return found;
 }
 
+/** Names a trial by its id, or by the code of its address. */
+export type TrialName = { readonly id: string } | { readonly code: string };
+
 /**
- * Loads the state of a trial in five statements, whatever the number of cohorts and subjects.
- * @param trialId the trial's id; throws when there is no such trial
+ * Loads the state of a trial in four statements, whatever the number of cohorts and subjects, or null when there is
+ * no such trial.
  */
-export async function loadTrialState(trialId: string, options: LoadOptions = {}): Promise<LoadedTrial> {
+export async function findTrial(name: TrialName, options: LoadOptions = {}): Promise<LoadedTrial | null> {
   const { sequelize, models } = database();
   const select = (sql: string): Promise<RawRow[]> =>
-    sequelize.query(sql, { type: QueryTypes.SELECT, replacements: { trialId } });
+    sequelize.query(sql, { type: QueryTypes.SELECT, replacements: { ...name } });
+  const trialId = 'id' in name ? ':id' : '(SELECT id FROM trials WHERE code = :code)';
   const m = models;
 
   const textColumns = options.withTexts
@@ -71,73 +75,81 @@ export async function loadTrialState(trialId: string, options: LoadOptions = {})
     FROM trials t
     LEFT JOIN design_versions v ON v.trial_id = t.id
     LEFT JOIN halts h ON h.trial_id = t.id
-    WHERE t.id = :trialId`);
-  const memberRows = await select(`
-    SELECT ${columnsOf(m.Membership, 'm')}, p.printed_name, p.email, p.state AS person_state, s.site_id
+    WHERE t.id = ${trialId}`);
+  const memberColumns = `${columnsOf(m.Membership, 'm')}, p.printed_name, p.email, p.state AS person_state,
+    k.site_id AS member_site_id, ${columnsOf(m.TrialSite, 'x')}, s.code AS site_code, s.name AS site_name,
+    s.time_zone`;
+  const memberAndSiteRows = await select(`
+    SELECT ${memberColumns}
     FROM memberships m
     JOIN people p ON p.id = m.person_id
-    LEFT JOIN membership_sites s ON s.membership_id = m.id
-    WHERE m.trial_id = :trialId`);
-  const siteRows = await select(`
-    SELECT ${columnsOf(m.TrialSite, 'x')}, s.code, s.name, s.time_zone
-    FROM trial_sites x JOIN sites s ON s.id = x.site_id
-    WHERE x.trial_id = :trialId`);
+    LEFT JOIN membership_sites k ON k.membership_id = m.id
+    LEFT JOIN trial_sites x ON FALSE
+    LEFT JOIN sites s ON FALSE
+    WHERE m.trial_id = ${trialId}
+    UNION ALL
+    SELECT ${memberColumns}
+    FROM trial_sites x
+    JOIN sites s ON s.id = x.site_id
+    LEFT JOIN memberships m ON FALSE
+    LEFT JOIN people p ON FALSE
+    LEFT JOIN membership_sites k ON FALSE
+    WHERE x.trial_id = ${trialId}`);
   const cohortRows = await select(`
     SELECT ${columnsOf(m.Cohort, 'c')}, ${columnsOf(m.Release, 'e')}, ${columnsOf(m.Subject, 's')}
     FROM cohorts c
     JOIN releases e ON e.id = c.release_id
     LEFT JOIN subjects s ON s.cohort_id = c.id
-    WHERE c.trial_id = :trialId`);
+    WHERE c.trial_id = ${trialId}`);
   const recommendationRows = await select(`
     SELECT ${columnsOf(m.Recommendation, 'r', ['record'])}, ${columnsOf(m.Signature, 'g', ['signedText'])}, ${textColumns}
     FROM signatures g
     LEFT JOIN recommendations r ON r.id = g.recommendation_id
-    WHERE g.trial_id = :trialId
+    WHERE g.trial_id = ${trialId}
     UNION ALL
     SELECT ${columnsOf(m.Recommendation, 'r', ['record'])}, ${columnsOf(m.Signature, 'g', ['signedText'])}, ${textColumns}
     FROM recommendations r
     LEFT JOIN signatures g ON FALSE
-    WHERE r.trial_id = :trialId`);
+    WHERE r.trial_id = ${trialId}`);
 
   const first = trialRows[0];
-  if (first === undefined) throw new Error(`There is no trial ${trialId}.`);
+  if (first === undefined) return null;
   const trial = entityOf<
     TrialFacts & { version: number; chainSequence: number; chainHead: string; chainTime: string }
   >(m.Trial, 't', first);
-  if (trial === null) throw new Error(`There is no trial ${trialId}.`);
+  if (trial === null) return null;
   const { version, chainSequence: _sequence, chainHead: _head, chainTime: _time, ...facts } = trial;
 
   const members: Record<string, Member> = {};
   const people: Record<string, DirectoryEntry> = {};
-  for (const row of memberRows) {
-    const member = entityOf<Member & { trialId: string }>(m.Membership, 'm', row);
-    if (member === null) continue;
-    const { trialId: _trialId, ...rest } = member;
-    const siteIds = members[member.personId]?.siteIds ?? [];
-    members[member.personId] = {
-      ...rest,
-      siteIds: row.site_id ? [...siteIds, String(row.site_id)].sort() : siteIds,
-    };
-    people[member.personId] = {
-      personId: member.personId,
-      printedName: String(row.printed_name),
-      email: String(row.email),
-      isActive: row.person_state === 'active',
-    };
-  }
-
   const trialSites: Record<string, TrialSite> = {};
   const sites: Record<string, SiteEntry> = {};
-  for (const row of siteRows) {
+  for (const row of memberAndSiteRows) {
+    const member = entityOf<Member & { trialId: string }>(m.Membership, 'm', row);
+    if (member !== null) {
+      const { trialId: _trialId, ...rest } = member;
+      const siteIds = members[member.personId]?.siteIds ?? [];
+      members[member.personId] = {
+        ...rest,
+        siteIds: row.member_site_id ? [...siteIds, String(row.member_site_id)].sort() : siteIds,
+      };
+      people[member.personId] = {
+        personId: member.personId,
+        printedName: String(row.printed_name),
+        email: String(row.email),
+        isActive: row.person_state === 'active',
+      };
+    }
     const site = entityOf<TrialSite & { trialId: string }>(m.TrialSite, 'x', row, 'siteId');
-    if (site === null) continue;
-    trialSites[site.siteId] = { siteId: site.siteId, state: site.state };
-    sites[site.siteId] = {
-      siteId: site.siteId,
-      code: String(row.code),
-      name: String(row.name),
-      timeZone: String(row.time_zone),
-    };
+    if (site !== null) {
+      trialSites[site.siteId] = { siteId: site.siteId, state: site.state };
+      sites[site.siteId] = {
+        siteId: site.siteId,
+        code: String(row.site_code),
+        name: String(row.site_name),
+        timeZone: String(row.time_zone),
+      };
+    }
   }
 
   const entities = <T extends { id: string }>(
@@ -183,4 +195,11 @@ export async function loadTrialState(trialId: string, options: LoadOptions = {})
     sites,
     version,
   };
+}
+
+/** The state of a trial that exists; throws when there is none. */
+export async function loadTrialState(trialId: string, options: LoadOptions = {}): Promise<LoadedTrial> {
+  const loaded = await findTrial({ id: trialId }, options);
+  if (loaded === null) throw new Error(`There is no trial ${trialId}.`);
+  return loaded;
 }
