@@ -151,7 +151,7 @@ const roomRules = Object.entries(rooms).map(([room, { may, packages }]) => {
 });
 
 const config = [
-  { ignores: ['.next/**', '.data/**', 'node_modules/**', 'public/**', 'next-env.d.ts', 'coverage/**'] },
+  { ignores: ['.next*/**', '.data/**', 'node_modules/**', 'public/**', 'next-env.d.ts', 'coverage/**'] },
   ...nextCoreWebVitals,
   ...nextTypescript,
   {

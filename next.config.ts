@@ -14,6 +14,8 @@ const everyAnswer = [
 ];
 
 const nextConfig: NextConfig = {
+  // A second development server in one tree needs a folder of its own.
+  distDir: process.env.NEXT_DIST_DIR ?? '.next',
   reactStrictMode: true,
   poweredByHeader: false,
   serverExternalPackages: ['sequelize', 'mariadb', 'piscina', '@node-rs/argon2', 'pino'],
