@@ -1,7 +1,7 @@
 import { equalDecimals } from '@/lib/design/decimal';
+import { doseText } from '@/lib/design/dose-text';
 import type { TrialInput } from '@/lib/schemas/trial-inputs';
 import { type Deciding, refuse } from '../decision';
-import { doseText } from '../dose-text';
 import { windowEnd } from '../observation-window';
 import { ownSubject, whyNoNewSubject } from './slots';
 

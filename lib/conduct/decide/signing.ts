@@ -1,9 +1,9 @@
 import { compareDecimals, equalDecimals } from '@/lib/design/decimal';
+import { doseText } from '@/lib/design/dose-text';
 import { isDesignDose } from '../design-doses';
 import type { Design } from '@/lib/schemas/design';
 import type { TrialInput } from '@/lib/schemas/trial-inputs';
 import { type Deciding, refuse } from '../decision';
-import { doseText } from '../dose-text';
 import { requirePermission } from '../permitted';
 import { sign } from '../signature';
 import type { RecommendationRow, TrialState } from '../state';
