@@ -1,7 +1,7 @@
 import * as mariadb from 'mariadb';
 import { Umzug, type UmzugStorage } from 'umzug';
 import { migrations } from '@/migrations';
-import type { MigrationContext } from '@/migrations/migration';
+import type { Migration, MigrationContext } from '@/migrations/migration';
 import { applyGrants } from './apply-grants';
 
 export type InstallationKind = 'production' | 'demo' | 'test';
@@ -62,20 +62,26 @@ export async function pendingMigrations(applicationUrl: string): Promise<string[
   }
 }
 
+/** MariaDB's numbers for "that exists already": table, column, key, trigger, constraint. */
+const EXISTS_ALREADY = new Set([1050, 1060, 1061, 1359, 1826]);
+
+/**
+ * Runs what has not run. Each migration is noted before and after its one statement: MariaDB keeps a statement
+ * whole or not at all but commits it apart from our note, so that a run killed in between is known by its half note.
+ */
 async function runPending(owner: mariadb.Connection): Promise<string[]> {
   await owner.query(
     `CREATE TABLE IF NOT EXISTS migrations (
        name VARCHAR(160) CHARACTER SET ascii COLLATE ascii_bin PRIMARY KEY,
-       ran_at DATETIME(3) NOT NULL DEFAULT UTC_TIMESTAMP(3)
+       started_at DATETIME(3) NOT NULL DEFAULT UTC_TIMESTAMP(3),
+       finished_at DATETIME(3) NULL
      )`,
   );
-  const context: MigrationContext = {
-    query: async (sql) => {
-      await owner.query(sql);
-    },
-  };
   const umzug = new Umzug({
-    migrations: migrations.map(({ name, up }) => ({ name, up: () => up(context) })),
+    migrations: migrations.map((migration) => ({
+      name: migration.name,
+      up: () => runNoted(owner, migration),
+    })),
     storage: storage(owner),
     context: {},
     logger: undefined,
@@ -83,18 +89,41 @@ async function runPending(owner: mariadb.Connection): Promise<string[]> {
   return (await umzug.up()).map(({ name }) => name);
 }
 
+async function runNoted(owner: mariadb.Connection, migration: Migration): Promise<void> {
+  const context: MigrationContext = {
+    query: async (sql) => {
+      await owner.query(sql);
+    },
+  };
+  const noted: { affectedRows: number } = await owner.query(
+    'INSERT IGNORE INTO migrations (name) VALUES (?)',
+    [migration.name],
+  );
+  const wasStarted = noted.affectedRows === 0;
+  try {
+    await migration.up(context);
+  } catch (error) {
+    const isDone = wasStarted && error instanceof mariadb.SqlError && EXISTS_ALREADY.has(error.errno);
+    if (isDone) return;
+    if (!wasStarted) await owner.query('DELETE FROM migrations WHERE name = ?', [migration.name]);
+    throw error;
+  }
+}
+
 function storage(owner: mariadb.Connection): UmzugStorage {
   return {
     executed: () => executedNames(owner),
     logMigration: async ({ name }) => {
-      await owner.query('INSERT INTO migrations (name) VALUES (?)', [name]);
+      await owner.query('UPDATE migrations SET finished_at = UTC_TIMESTAMP(3) WHERE name = ?', [name]);
     },
     unlogMigration: () => Promise.reject(new Error('Migrations go forward only.')),
   };
 }
 
 async function executedNames(connection: mariadb.Connection): Promise<string[]> {
-  const rows: { name: string }[] = await connection.query('SELECT name FROM migrations ORDER BY name');
+  const rows: { name: string }[] = await connection.query(
+    'SELECT name FROM migrations WHERE finished_at IS NOT NULL ORDER BY name',
+  );
   return rows.map(({ name }) => name);
 }
 
