@@ -1,14 +1,15 @@
 import { models } from '@/lib/db/connection';
 import { newId } from '@/lib/hash';
+import type { MailKind, MailPayload } from '@/lib/schemas/mail-payloads';
 
 /** A mail to be sent once per kind, cause and address. */
 export interface QueuedMail {
-  readonly kind: string;
+  readonly kind: MailKind;
   /** The id of the event (or link) that causes it. */
   readonly cause: string;
   readonly personId: string | null;
   readonly address: string;
-  readonly payload: object;
+  readonly payload: MailPayload;
   /** 0 goes first. */
   readonly priority: number;
 }

@@ -9,6 +9,7 @@ import { inTransaction } from '@/lib/db/transaction';
 import { notFound, RefusedError } from '@/lib/errors';
 import { newId, sha256 } from '@/lib/hash';
 import { type DirectoryEntry, loadTrialState } from '@/lib/queries/load-trial-state';
+import { trialNoticeSchema } from '@/lib/schemas/mail-payloads';
 import { SIGNED_COMMANDS } from '@/lib/schemas/trial-inputs';
 import { SOFTWARE_VERSION } from '@/lib/software-version';
 import { appendToChain, type ChainHead } from './append-to-chain';
@@ -88,7 +89,7 @@ async function actorOf(request: TrialCommandRequest, state: TrialState): Promise
   return { personId: person.id, printedName: person.printedName, role: member.role };
 }
 
-/** Queues the mails that events bring about; the letters carry the chain's head after them. */
+/** Queues the mails that events bring about; each carries the chain's head after them. */
 export async function queueNotices(
   events: readonly TrialEvent[],
   state: TrialState,
@@ -101,12 +102,10 @@ export async function queueNotices(
     noticesFor(events, state).flatMap((notice) => {
       const person = people[notice.personId];
       if (!person?.isActive) return [];
-      const { kind } = notice.payload;
-      const payload =
-        'chainHead' in notice.payload ? { ...notice.payload, chainHead: head.hash } : notice.payload;
+      const payload = trialNoticeSchema.parse({ ...notice.payload, chainHead: head.hash });
       return [
         {
-          kind,
+          kind: payload.kind,
           cause: eventIds[notice.eventIndex] ?? '',
           personId: notice.personId,
           address: person.email,

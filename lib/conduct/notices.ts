@@ -1,45 +1,9 @@
+import { equalDecimals } from '@/lib/design/decimal';
 import type { TrialRole } from '@/lib/policy/roles';
+import type { UnchainedNotice } from '@/lib/schemas/mail-payloads';
 import type { TrialEvent } from './events';
 import type { TrialState } from './state';
 import { standingMembers } from './trial-facts';
-
-/** The mails a trial's events bring about, each with its payload; no subject code, grade or free text in any. */
-export type NoticePayload =
-  | { readonly kind: 'design-submitted'; readonly trialCode: string }
-  | { readonly kind: 'design-returned'; readonly trialCode: string }
-  | {
-      readonly kind: 'recommendation-ready';
-      readonly trialCode: string;
-      readonly recommendationId: string;
-      readonly afterCohort: number | null;
-    }
-  | {
-      readonly kind: 'dose-released';
-      readonly trialCode: string;
-      readonly releaseId: string;
-      readonly cohortNumber: number;
-      readonly dose: string;
-      readonly unit: string;
-      readonly doseNotation: 'plain' | 'powers-of-ten';
-      readonly cohortSize: number;
-      readonly designVersion: number;
-      readonly signers: readonly string[];
-      readonly chainHead: string;
-    }
-  | {
-      readonly kind: 'dose-released-summary';
-      readonly trialCode: string;
-      readonly releaseId: string;
-      readonly cohortNumber: number;
-      readonly dose: string;
-      readonly unit: string;
-      readonly doseNotation: 'plain' | 'powers-of-ten';
-      readonly chainHead: string;
-    }
-  | { readonly kind: 'packet-returned'; readonly trialCode: string; readonly cohortNumber: number | null }
-  | { readonly kind: 'trial-halted'; readonly trialCode: string; readonly haltId: string }
-  | { readonly kind: 'trial-lifted'; readonly trialCode: string }
-  | { readonly kind: 'trial-closed'; readonly trialCode: string };
 
 export interface Notice {
   /** The event that causes it, by its place among the decided events. */
@@ -47,7 +11,8 @@ export interface Notice {
   readonly personId: string;
   /** 0 goes first. */
   readonly priority: number;
-  readonly payload: NoticePayload;
+  /** No subject code, grade or free text. */
+  readonly payload: UnchainedNotice;
 }
 
 const EVERYONE: readonly TrialRole[] = [
@@ -60,26 +25,37 @@ const EVERYONE: readonly TrialRole[] = [
 ];
 const SITES: readonly TrialRole[] = ['coordinator', 'investigator'];
 
-/** What an event gives notice of, and to which roles. The chain's head is filled in once the events are stored. */
-function noticesOf(
-  event: TrialEvent,
-  state: TrialState,
-): { to: readonly TrialRole[]; priority: number; payload: NoticePayload }[] {
-  const trialCode = state.trial.code;
-  const { payload } = event;
+interface NoticeOfEvent {
+  readonly to: readonly TrialRole[];
+  readonly priority: number;
+  readonly payload: UnchainedNotice;
+}
+
+/** What an event gives notice of, and to which roles. The chain's head is added once the events are stored. */
+function noticesOf({ occurredAt, payload }: TrialEvent, state: TrialState): NoticeOfEvent[] {
+  const common = { trialCode: state.trial.code, occurredAt };
   switch (payload.kind) {
     case 'design-submitted':
-      return [{ to: ['reviewer'], priority: 5, payload: { kind: 'design-submitted', trialCode } }];
-    case 'design-returned':
-      return [{ to: ['statistician'], priority: 5, payload: { kind: 'design-returned', trialCode } }];
+    case 'design-returned': {
+      const { kind, versionId } = payload;
+      const version = state.designVersions[versionId];
+      if (!version) throw new Error('A design without its version.');
+      return [
+        {
+          to: kind === 'design-submitted' ? ['reviewer'] : ['statistician'],
+          priority: 5,
+          payload: { ...common, kind, versionId, designVersion: version.number },
+        },
+      ];
+    }
     case 'recommendation-computed':
       return [
         {
           to: ['reviewer'],
           priority: 2,
           payload: {
+            ...common,
             kind: 'recommendation-ready',
-            trialCode,
             recommendationId: payload.recommendationId,
             afterCohort: payload.number === 1 ? null : payload.number - 1,
           },
@@ -90,53 +66,50 @@ function noticesOf(
       const version = recommendation && state.designVersions[recommendation.designVersionId];
       if (!version) throw new Error('A release without its design version.');
       const { unit, doseNotation, cohortSize } = version.design;
-      const common = {
-        trialCode,
-        releaseId: payload.releaseId,
-        cohortNumber: payload.cohortNumber,
-        dose: payload.dose,
-        unit,
-        doseNotation,
-        chainHead: '',
-      };
+      const { releaseId, cohortNumber, dose } = payload;
+      const released = { ...common, releaseId, cohortNumber, dose, unit, doseNotation };
       const signers = Object.values(state.signatures)
-        .filter((each) => each.isStanding && each.recommendationId === payload.recommendationId)
+        .filter(
+          (each) =>
+            each.isStanding &&
+            each.recommendationId === payload.recommendationId &&
+            each.decision === 'release' &&
+            each.dose !== null &&
+            equalDecimals(each.dose, dose),
+        )
         .map((each) => each.printedName)
         .sort();
       return [
         {
           to: SITES,
           priority: 1,
-          payload: {
-            ...common,
-            kind: 'dose-released',
-            cohortSize,
-            designVersion: version.number,
-            signers,
-          },
+          payload: { ...released, kind: 'dose-released', cohortSize, designVersion: version.number, signers },
         },
-        { to: ['sponsor'], priority: 4, payload: { ...common, kind: 'dose-released-summary' } },
+        { to: ['sponsor'], priority: 4, payload: { ...released, kind: 'dose-released-summary' } },
       ];
     }
     case 'recommendation-returned': {
       const number = state.recommendations[payload.recommendationId]?.number ?? 1;
-      const cohortNumber = number === 1 ? null : number - 1;
+      // A returned starting dose sends the design back, of which there is a notice of its own.
+      if (number === 1) return [];
       return [
         {
-          to: cohortNumber === null ? ['statistician'] : SITES,
+          to: SITES,
           priority: 2,
-          payload: { kind: 'packet-returned', trialCode, cohortNumber },
+          payload: { ...common, kind: 'packet-returned', cohortNumber: number - 1 },
         },
       ];
     }
     case 'trial-halted':
       return [
-        { to: EVERYONE, priority: 0, payload: { kind: 'trial-halted', trialCode, haltId: payload.haltId } },
+        { to: EVERYONE, priority: 0, payload: { ...common, kind: 'trial-halted', haltId: payload.haltId } },
       ];
     case 'trial-lifted':
-      return [{ to: EVERYONE, priority: 1, payload: { kind: 'trial-lifted', trialCode } }];
+      return [
+        { to: EVERYONE, priority: 1, payload: { ...common, kind: 'trial-lifted', haltId: payload.haltId } },
+      ];
     case 'trial-closed':
-      return [{ to: EVERYONE, priority: 1, payload: { kind: 'trial-closed', trialCode } }];
+      return [{ to: EVERYONE, priority: 1, payload: { ...common, kind: 'trial-closed' } }];
     default:
       return [];
   }
