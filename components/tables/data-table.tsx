@@ -87,7 +87,7 @@ export function DataTable<Key extends string>({
             type="button"
             className={buttonClass('secondary', true)}
             onClick={() =>
-              download(
+              downloadCsv(
                 csvName,
                 toCsv(
                   visible,
