@@ -1,4 +1,5 @@
 import { afterAll, describe, expect, it } from 'vitest';
+import { PROPERTY_RUNS } from '@/tests/properties';
 import { Deviations, readReference } from '@/tests/reference/read-reference';
 import { normalDensity, normalQuantile } from '../distributions';
 import { openStream } from '../random/streams';
@@ -146,7 +147,7 @@ function simulate(inputs: MonteCarlo, replicates: number, seed: number): { value
 }
 
 describe('simulated variance', () => {
-  const more = process.env.STEPWELL_SOAK ? 10 : 1;
+  const more = PROPERTY_RUNS / 100;
   for (const c of cases) {
     const { inputs } = c;
     if (inputs.kind !== 'monte_carlo') continue;
