@@ -8,7 +8,7 @@ const UPLOAD_ADDRESSES: readonly RegExp[] = [];
 
 /** Pages a visitor sees without being signed in. The API answers for itself, with a status code. */
 const OPEN_ADDRESSES =
-  /^\/(sign-in|sign-out|forgotten-password|reset|invitation|setup|mail|health|api)(\/|$)/;
+  /^\/(sign-in|sign-out|forgotten-password|reset|invitation|link|setup|mail|health|api)(\/|$)/;
 
 /** Answers that carry their own, narrower content security policy (a caught mail shown in a frame). */
 const OWN_POLICY_ADDRESSES = /^\/(api\/)?mail\/[^/]+\/(html|content)$/;
@@ -96,6 +96,8 @@ export function proxy(request: NextRequest): NextResponse {
   const headers = new Headers(request.headers);
   headers.set('content-security-policy', policy);
   headers.set('x-nonce', nonce);
+  // Where a page sends a visitor back to whose session has ended meanwhile.
+  headers.set('x-stepwell-address', request.nextUrl.pathname + request.nextUrl.search);
   const response = NextResponse.next({ request: { headers } });
   if (!OWN_POLICY_ADDRESSES.test(request.nextUrl.pathname)) {
     response.headers.set('content-security-policy', policy);
