@@ -21,14 +21,15 @@ export function valuesToSend<T extends FieldValues>(values: T, fields: KnownFiel
   return copy;
 }
 
-/** The sentences for number fields whose text is no number, by path. */
-export function unreadableNumbers(values: FieldValues, fields: KnownFields): Map<string, string> {
+/** The sentences for fields whose text cannot be read as their value (a number, a time), by path. */
+export function unreadableValues(values: FieldValues, fields: KnownFields): Map<string, string> {
   const sentences = new Map<string, string>();
-  for (const [name, { number }] of fields) {
+  for (const [name, facts] of fields) {
     const value: unknown = get(values, name);
-    if (!number || typeof value !== 'string' || value === '') continue;
-    const reading = readNumber(value);
-    if (!reading.ok) sentences.set(name, reading.sentence);
+    if (typeof value !== 'string' || value === '') continue;
+    const reading = facts.number ? readNumber(value) : null;
+    const sentence = reading && !reading.ok ? reading.sentence : (facts.unreadable?.(value) ?? null);
+    if (sentence !== null) sentences.set(name, sentence);
   }
   return sentences;
 }

@@ -17,7 +17,7 @@ import {
 import type { z } from 'zod';
 import type { ActionRefusal, ActionResult, Submission } from '@/lib/schemas/action-result';
 import type { FieldFacts, FormContextValue } from './form-context';
-import { problemsOf, unreadableNumbers, valuesToSend, type FieldProblem } from './form-values';
+import { problemsOf, unreadableValues, valuesToSend, type FieldProblem } from './form-values';
 
 /** How the last attempt to send ended. `lost`: no answer came, so nobody knows whether it was recorded. */
 export type FormOutcome<Value> =
@@ -83,10 +83,10 @@ export function useActionForm<Schema extends z.ZodType<unknown, FieldValues>, Va
     const bySchema = zodResolver(schema, undefined, { raw: true }) as unknown as Resolver<Values>;
     const resolve: Resolver<Values> = async (values, context, options) => {
       const result = await bySchema(valuesToSend(values, fields.current), context, options);
-      const sentences = unreadableNumbers(values, fields.current);
+      const sentences = unreadableValues(values, fields.current);
       if (sentences.size === 0) return result;
       const errors = { ...result.errors };
-      for (const [name, message] of sentences) set(errors, name, { type: 'number', message });
+      for (const [name, message] of sentences) set(errors, name, { type: 'unreadable', message });
       return { values: {}, errors: errors as FieldErrors<Values> };
     };
     return resolve;
