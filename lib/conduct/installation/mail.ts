@@ -1,0 +1,27 @@
+import {
+  type InstallationContext,
+  type InstallationPayloads,
+  refuse,
+  requireAdministrator,
+} from './decision';
+
+/** Mails that carry a link: their token is wiped once they were sent or given up. */
+export const LINK_MAIL_KINDS: readonly string[] = ['invitation', 'password-reset'];
+
+/** Puts a mail that was given up back into the queue. */
+export function retryMail(
+  mail: { readonly id: string; readonly kind: string; readonly state: string },
+  context: InstallationContext,
+): InstallationPayloads {
+  requireAdministrator(context);
+  if (mail.state !== 'dead') {
+    refuse('refused', 'Not queued again. Only a mail that was given up can be tried again.');
+  }
+  if (LINK_MAIL_KINDS.includes(mail.kind)) {
+    refuse(
+      'refused',
+      'Not queued again. The link of this mail was wiped when the mail was given up; send a new one from the person’s page.',
+    );
+  }
+  return [{ kind: 'mail-queued-again', mailId: mail.id }];
+}
