@@ -37,7 +37,8 @@ export interface ActionFormState<Values extends FieldValues = FieldValues, Value
   submit: (event?: { preventDefault: () => void }) => void;
 }
 
-interface ActionFormOptions<Schema extends z.ZodType<unknown, FieldValues>, Value> {
+/** What a form over a server action is made of. */
+export interface ActionFormOptions<Schema extends z.ZodType<unknown, FieldValues>, Value> {
   /** The schema the action parses its input with; what it refuses here is not sent. */
   schema: Schema;
   /** The server action: takes the values as typed and a submission key. */

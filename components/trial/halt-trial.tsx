@@ -4,7 +4,7 @@ import { useRouter } from 'next/navigation';
 import { ActionForm } from '@/components/forms/action-form';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { TextArea } from '@/components/forms/text-field';
-import { type FormAction, useActionForm } from '@/components/forms/use-action-form';
+import { type ActionFormOptions, useActionForm } from '@/components/forms/use-action-form';
 import { DisclosureHalt } from '@/components/ui/disclosure-halt';
 import { trialFormSchemas } from '@/lib/schemas/trial-forms';
 
@@ -16,7 +16,7 @@ export function HaltTrial({
   action,
 }: {
   trialCode: string;
-  action: FormAction<typeof schema, unknown>;
+  action: ActionFormOptions<typeof schema, unknown>['action'];
 }) {
   const router = useRouter();
   const state = useActionForm({

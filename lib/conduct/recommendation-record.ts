@@ -1,5 +1,6 @@
 import { canonicalize } from 'json-canonicalize';
-import { type CohortHistory, recommend, type Recommendation } from '@/lib/design/recommend';
+import type { CohortHistory } from '@/lib/design/history';
+import { recommend, type Recommendation } from '@/lib/design/recommend';
 import type { Design } from '@/lib/schemas/design';
 import type { Deciding } from './decision';
 import type { DesignVersion, TrialState } from './state';
@@ -49,7 +50,7 @@ export function computeRecommendation(deciding: Deciding, version: DesignVersion
   const { state, context } = deciding;
   const history = historyOf(state);
   const result = recommend(version.design, { cohorts: history });
-  if (!result.ok) throw new Error(`No recommendation could be computed: ${JSON.stringify(result.failure)}`);
+  if (!result.ok) throw new Error(`No recommendation could be computed: ${JSON.stringify(result.error)}`);
   const revision = revisionsOf(state, number).length + 1;
   const recommendation = result.value;
   const record: RecommendationRecord = {
