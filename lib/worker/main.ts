@@ -8,12 +8,12 @@ import { renderMail } from '@/emails/registry';
 import { closeDatabase, models } from '../db/connection';
 import { environment } from '../env';
 import { log } from '../log';
-import { deliverNextMail, type MailDelivery } from './deliver-mail';
+import { causeStillHolds } from '../queries/cause-still-holds';
+import { deliverNextMail, type MailDelivery, type RenderedMail } from './deliver-mail';
 import { repeat } from './loop';
 import { type MailCatcher, startMailCatcher } from './mail-catcher';
 import type { ClaimedMail } from './outbox';
 import { mailSender } from './send';
-import { stillHolds } from './still-holds';
 
 const IDLE_MS = 500;
 const UNAVAILABLE_MS = 5_000;
@@ -21,7 +21,7 @@ const UNAVAILABLE_MS = 5_000;
 const ending = new AbortController();
 for (const name of ['SIGINT', 'SIGTERM'] as const) process.once(name, () => ending.abort());
 
-async function renderClaimed(mail: ClaimedMail): ReturnType<typeof renderMail> {
+async function renderClaimed(mail: ClaimedMail): Promise<RenderedMail> {
   const person = mail.personId === null ? null : await models().Person.findByPk(mail.personId);
   return renderMail(mail.kind, JSON.parse(mail.payload), {
     url: environment().url,
@@ -51,7 +51,7 @@ async function main(): Promise<void> {
       owner: `${hostname().slice(0, 40)}:${randomUUID()}`,
       send: mailSender(server.smtpUrl, environment().mailFrom),
       render: renderClaimed,
-      stillHolds,
+      stillHolds: (mail) => causeStillHolds({ ...mail, payload: JSON.parse(mail.payload) }),
     };
     const step = async (): Promise<number> => {
       const result = await deliverNextMail(delivery);
