@@ -25,23 +25,33 @@ export function requireAdministrator(deciding: Deciding): void {
   }
 }
 
+/** What keeps a person from signing steps of a trial. */
+export type SigningObstacle = 'no-reviewer' | 'recorded-data' | 'proposed-design';
+
 /**
- * Why a person may not sign a step of this trial, as a sentence, or null when they may. A signer is a standing
- * safety reviewer who never recorded data of the trial and proposed no version in force or in review.
+ * What keeps a person from signing a step of this trial, or null when nothing does. A signer is a standing safety
+ * reviewer who never recorded data of the trial and proposed no version in force or in review.
  */
-export function whyMayNotSign(state: TrialState, personId: string): string | null {
+export function signingObstacle(state: TrialState, personId: string): SigningObstacle | null {
   const member = standingMember(state, personId);
-  if (member === null || !roleMay(member.role, 'recommendation.sign')) {
-    return 'Only a safety reviewer of this trial may sign.';
-  }
-  if (member.hasRecordedData) {
-    return 'You recorded data of this trial, so you may sign none of its steps.';
-  }
+  if (member === null || !roleMay(member.role, 'recommendation.sign')) return 'no-reviewer';
+  if (member.hasRecordedData) return 'recorded-data';
   const proposed = Object.values(state.designVersions).some(
     (version) => version.state !== 'draft' && version.proposedBy === personId,
   );
-  if (proposed) return 'You proposed a design version of this trial, so you may sign none of its steps.';
-  return null;
+  return proposed ? 'proposed-design' : null;
+}
+
+const OBSTACLE_TO_SIGNER: Readonly<Record<SigningObstacle, string>> = {
+  'no-reviewer': 'Only a safety reviewer of this trial may sign.',
+  'recorded-data': 'You recorded data of this trial, so you may sign none of its steps.',
+  'proposed-design': 'You proposed a design version of this trial, so you may sign none of its steps.',
+};
+
+/** Why a person may not sign a step of this trial, as a sentence said to them; null when they may. */
+export function whyMayNotSign(state: TrialState, personId: string): string | null {
+  const obstacle = signingObstacle(state, personId);
+  return obstacle && OBSTACLE_TO_SIGNER[obstacle];
 }
 
 /** The people who may sign steps of the trial as it stands. */
