@@ -7,9 +7,13 @@ import { runPublicCommand } from './installation/run-installation-command';
 /**
  * Makes the single-use link with which the first administrator creates their account; links made before stop working.
  * @param baseUrl the address under which people reach the installation, without a slash at its end
+ * @param clock the clock, for building demonstrations with earlier times; the server's otherwise
  * @returns the link, which works for 24 hours, or null when there is an active administrator
  */
-export async function makeFirstAdministratorLink(baseUrl: string): Promise<string | null> {
+export async function makeFirstAdministratorLink(
+  baseUrl: string,
+  clock?: () => number,
+): Promise<string | null> {
   const { token } = await runPublicCommand<{ token: string | null }>(
     'system',
     async (context) => {
@@ -27,7 +31,7 @@ export async function makeFirstAdministratorLink(baseUrl: string): Promise<strin
         result: { token: link.token },
       };
     },
-    { repeatable: false },
+    { clock, repeatable: false },
   );
   return token === null ? null : `${baseUrl}${linkPath('first-administrator', token)}`;
 }

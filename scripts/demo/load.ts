@@ -1,0 +1,15 @@
+import { playBrook07 } from './brook-07';
+import { createDemoPeople, listDemoAccounts } from './people';
+import { DAY } from './play-trial';
+import { playWell02 } from './well-02';
+
+/**
+ * Loads the demonstration into a fresh installation: people, sites and trials brought to their states by the
+ * application's own commands, at times relative to now. Throws where something of it is refused.
+ */
+export async function loadDemo(now = Date.now()): Promise<void> {
+  const { people, sites } = await createDemoPeople(now - 230 * DAY);
+  await playWell02(people, sites, now);
+  await playBrook07(people, sites, now);
+  await listDemoAccounts(people);
+}
