@@ -3,8 +3,8 @@ import NextAuth from 'next-auth';
 import type { NextRequest } from 'next/server';
 import { RefusedError } from '@/lib/errors';
 import { authOptions } from './auth-options';
+import { hidden } from './hidden';
 import { problemOf } from './problem';
-import { hidden } from './route';
 
 type Context = { params: Promise<{ nextauth: string[] }> };
 

@@ -3,7 +3,8 @@ import { z } from 'zod';
 import { RefusedError } from '@/lib/errors';
 import { environment } from '@/lib/env';
 import { roleMay, type TrialPermission } from '@/lib/policy/trial-permissions';
-import { SIGNED_OUT } from './action';
+import { SIGNED_OUT } from './answering';
+import { hidden } from './hidden';
 import { problemOf } from './problem';
 import { refusedInput } from './refused-input';
 import { currentReader, membershipByCode, peekReader, type Reader, type ReaderMembership } from './session';
@@ -98,14 +99,6 @@ export function trialRoute<
       const asked = await parseRequest(request, query, body);
       return response.parse(await handle({ request, params, reader, membership, ...asked }));
     });
-}
-
-/** What a trial, an address or a record that is not the reader's answers: as if it did not exist. */
-export function hidden(): RefusedError {
-  return new RefusedError({
-    code: 'not-found',
-    message: 'There is nothing at this address, or it is not yours to see.',
-  });
 }
 
 /** Runs the work of a route and answers with its value as JSON, or with the details of the problem. */

@@ -1,8 +1,9 @@
 import 'server-only';
 import { trialFormSchemas } from '@/lib/schemas/trial-forms';
 import { type TrialCommandType } from '@/lib/schemas/trial-inputs';
-import { answered, hidden, jsonOf, routeReader, type RouteHandler } from './route';
-import { parseTrialForm, performTrialForm } from './trial-action';
+import { hidden } from './hidden';
+import { answered, jsonOf, routeReader, type RouteHandler } from './route';
+import { parseTrialForm, performTrialForm } from './trial-form';
 
 const isCommand = (type: string): type is TrialCommandType => Object.hasOwn(trialFormSchemas, type);
 

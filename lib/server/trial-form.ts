@@ -6,10 +6,9 @@ import {
   type TrialCommandResult,
 } from '@/lib/commands/run-trial-command';
 import { RefusedError } from '@/lib/errors';
-import type { ActionResult } from '@/lib/schemas/action-result';
-import { trialFormSchemas, type TrialFormInput } from '@/lib/schemas/trial-forms';
+import { trialFormSchemas } from '@/lib/schemas/trial-forms';
 import type { TrialCommandType } from '@/lib/schemas/trial-inputs';
-import { actionReader, answering, parseSubmission } from './action';
+import { parseSubmission } from './answering';
 import { clientAddress } from './client-address';
 import type { Reader } from './session';
 
@@ -67,24 +66,4 @@ function asFieldErrors(error: unknown): unknown {
     ...error.refusal,
     fields: { password: 'Enter your address and your password again.' },
   });
-}
-
-/**
- * Runs one form of a trial: authenticate, parse, prove the identity for a signature, run the command. Each action of a
- * trial is one line around it in an `actions.ts` with 'use server'. What the input holds is not trusted.
- */
-export async function runTrialAction<Type extends TrialCommandType>(
-  type: Type,
-  input: TrialFormInput<Type>,
-): Promise<ActionResult<TrialCommandResult>> {
-  let personId: string | null = null;
-  return answering(
-    type,
-    () => personId,
-    async () => {
-      const reader = await actionReader();
-      personId = reader.personId;
-      return performTrialForm(reader, parseTrialForm(type, input));
-    },
-  );
 }
