@@ -9,7 +9,7 @@ import { DAY, HOUR, type PlayedSubject, TrialPlay } from './play-trial';
  * logarithmic scale, three sites. Half way through: cohort 5 of 10 is open and one outcome is due.
  */
 export async function playWell02(people: DemoPeople, sites: DemoSites, now: number): Promise<void> {
-  const start = now - 215 * DAY;
+  const start = now - 194 * DAY;
   await createTrial(
     { personId: people.administrator.personId, submissionKey: newId(), clock: () => start },
     {
@@ -80,10 +80,7 @@ export async function playWell02(people: DemoPeople, sites: DemoSites, now: numb
   await release();
   await trial.cohort([
     subject('aldermoor', 3 * DAY, 'absent'),
-    subject('aldermoor', 4 * DAY, 'absent', {
-      doseGiven: '10',
-      deviationReason: 'One of the two tablets was dropped and could not be replaced the same day.',
-    }),
+    subject('aldermoor', 4 * DAY, 'absent'),
     subject('valk', 6 * DAY, 'absent'),
   ]);
   await release();
@@ -95,7 +92,10 @@ export async function playWell02(people: DemoPeople, sites: DemoSites, now: numb
   await release();
   await trial.cohort([
     subject('serafin', 2 * DAY, 'absent'),
-    subject('aldermoor', 3 * DAY, 'absent'),
+    subject('aldermoor', 3 * DAY, 'absent', {
+      doseGiven: '20',
+      deviationReason: 'One of the two tablets was dropped and could not be replaced the same day.',
+    }),
     subject('valk', 7 * DAY, 'absent'),
   ]);
   // The fifth cohort opens so that the window of its last subject ended five hours ago, whenever the demo is loaded.
