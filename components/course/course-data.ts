@@ -43,6 +43,8 @@ export interface CourseText {
 export interface CourseShapes {
   width: number;
   height: number;
+  /** Where the steps begin; the doses' names stand to its left. */
+  left: number;
   /** Where the current cohort stands, for a frame that scrolls. */
   currentX: number;
   /** Hairlines at the height of the doses. */

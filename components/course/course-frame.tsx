@@ -18,7 +18,7 @@ export function CourseFrame({ at, children }: { at: number; children: ReactNode 
       role="group"
       aria-label="Course of doses"
       tabIndex={0}
-      className="frame-scroll -mx-4 px-4 md:mx-0 md:px-0 print:overflow-visible"
+      className="frame-scroll -mx-4 flex pr-4 md:mx-0 md:pr-0 print:overflow-visible"
     >
       {children}
     </div>

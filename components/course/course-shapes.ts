@@ -4,7 +4,7 @@ import { doseTicks, namedTicks, workingValue } from './course-scale';
 import { estimateInWords } from './course-words';
 
 const WIDTH = 900;
-const LEFT = 60;
+const NARROWEST_LEFT = 60;
 const RIGHT = 20;
 const TOP = 35;
 const BELOW = 30;
@@ -41,37 +41,38 @@ function placeMarks(
   });
 }
 
-/** The water line's text, at the right end: on the side of the line where it touches fewer steps and marks. */
-function waterLabel(
-  text: string,
-  x: number,
-  waterY: number,
-  bottom: number,
-  shapes: Pick<CourseShapes, 'marks' | 'released' | 'proposed'>,
-): CourseText {
+type Drawn = Pick<CourseShapes, 'marks' | 'released' | 'proposed'>;
+
+/** Whether a text that ends at its x lies over a mark or a step. */
+function touchesAnything({ x, y, text }: CourseText, { marks, released, proposed }: Drawn): boolean {
   const from = x - textWidth(text, true);
-  const corners = [...shapes.released, ...shapes.proposed];
-  const touches = (baseline: number) => {
-    const top = baseline - 11;
-    const low = baseline + 3;
-    const marks = shapes.marks.filter(
-      (mark) => mark.x + mark.radius > from && mark.y + mark.radius > top && mark.y - mark.radius < low,
-    ).length;
-    const steps = corners.slice(1).filter(([endX, endY], index) => {
-      const start = corners[index];
+  const top = y - 11;
+  const low = y + 3;
+  const overMark = marks.some(
+    (mark) => mark.x + mark.radius > from && mark.y + mark.radius > top && mark.y - mark.radius < low,
+  );
+  const overStep = [released, proposed].some((line) =>
+    line.slice(1).some(([endX, endY], index) => {
+      const start = line[index];
       return (
         start &&
         Math.max(start[0], endX) > from &&
         Math.max(start[1], endY) > top &&
         Math.min(start[1], endY) < low
       );
-    }).length;
-    return marks + steps;
-  };
-  const below = waterY + 16;
-  const above = waterY - 7;
-  const y = below > bottom + 4 ? above : above < 14 ? below : touches(above) < touches(below) ? above : below;
-  return { x, y, text, anchor: 'end', strong: true };
+    }),
+  );
+  return overMark || overStep;
+}
+
+/** The water line's text, at the right end: below the line, or above it where it would touch less there. */
+function waterLabel(text: string, x: number, waterY: number, bottom: number, drawn: Drawn): CourseText {
+  const at = (y: number): CourseText => ({ x, y, text, anchor: 'end', strong: true });
+  const below = at(waterY + 16);
+  const above = at(waterY - 7);
+  if (below.y > bottom + 4) return above;
+  if (above.y < 14) return below;
+  return touchesAnything(below, drawn) && !touchesAnything(above, drawn) ? above : below;
 }
 
 /**
@@ -81,7 +82,19 @@ function waterLabel(
  * @throws RangeError when a dose has no place on the scale (zero on a log scale)
  */
 export function courseShapes(data: CourseData): CourseShapes {
+  const shapes = shapesWithin(data, 0);
+  const estimate = estimateInWords(data);
+  if (!shapes.water || !touchesAnything(shapes.water.label, shapes)) return shapes;
+  return shapesWithin(data, textWidth(estimate, true));
+}
+
+/** @param reserve room kept free of columns at the right end, for the estimate's text */
+function shapesWithin(data: CourseData, reserve: number): CourseShapes {
   const ticks = doseTicks(data);
+  const left = Math.max(
+    NARROWEST_LEFT,
+    20 + Math.max(...ticks.map(({ text }, index) => textWidth(index === 0 ? `${text} ${data.unit}` : text))),
+  );
   const values = ticks.map(({ dose }) => workingValue(dose, data.scale));
   const lowest = values[0] ?? 0;
   const highest = values.at(-1) ?? 0;
@@ -94,10 +107,13 @@ export function courseShapes(data: CourseData): CourseShapes {
   };
 
   const columns = Math.max(1, data.cohorts.length + (data.proposed ? 1 : 0));
-  const column = Math.max(NARROWEST_COLUMN, Math.min(COLUMN, (WIDTH - LEFT - RIGHT - 40) / columns));
-  const width = Math.max(WIDTH, LEFT + 10 + columns * column + RIGHT + 10);
+  const column = Math.max(
+    NARROWEST_COLUMN,
+    Math.min(COLUMN, (WIDTH - left - RIGHT - Math.max(40, reserve)) / columns),
+  );
+  const width = Math.max(WIDTH, left + 10 + columns * column + RIGHT + Math.max(10, reserve));
   const right = width - RIGHT;
-  const startOf = (index: number) => LEFT + 10 + index * column;
+  const startOf = (index: number) => left + 10 + index * column;
   const middleOf = (index: number) => startOf(index) + column / 2;
 
   const released: [number, number][] = [];
@@ -121,11 +137,11 @@ export function courseShapes(data: CourseData): CourseShapes {
   const allLines = ticks.length < 2 || stairs / (ticks.length - 1) >= 6;
   const grid = heights
     .filter((_, index) => allLines || named.has(index))
-    .map((y) => ({ x1: LEFT, x2: right, y }));
+    .map((y) => ({ x1: left, x2: right, y }));
   const doseLabels = ticks.flatMap((tick, index): CourseText[] => {
     if (!named.has(index)) return [];
     const text = index === 0 ? `${tick.text} ${data.unit}` : tick.text;
-    return [{ x: LEFT - 10, y: (heights[index] ?? 0) + 4, text, anchor: 'end' }];
+    return [{ x: left - 10, y: (heights[index] ?? 0) + 4, text, anchor: 'end' }];
   });
 
   const running = data.cohorts.findLastIndex(({ state }) => state !== 'cancelled');
@@ -133,6 +149,7 @@ export function courseShapes(data: CourseData): CourseShapes {
   const shapes: CourseShapes = {
     width,
     height: bottom + BELOW,
+    left,
     currentX: middleOf(Math.max(0, current)),
     grid,
     doseLabels,
@@ -146,7 +163,7 @@ export function courseShapes(data: CourseData): CourseShapes {
     const y = heightOf(dose);
     const top = high === undefined ? undefined : heightOf(high);
     shapes.water = {
-      x1: LEFT,
+      x1: left,
       x2: right,
       y,
       ...(top !== undefined && low !== undefined ? { band: { y: top, height: heightOf(low) - top } } : {}),

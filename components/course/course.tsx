@@ -3,7 +3,7 @@ import { StaticTable } from '../tables/static-table';
 import type { Row } from '../tables/columns';
 import { OutcomeLegend } from '../ui/outcome-mark';
 import { wordOfState } from '../ui/chip';
-import type { CourseData, CourseText } from './course-data';
+import type { CourseData, CourseShapes, CourseText } from './course-data';
 import { CourseFrame } from './course-frame';
 import { courseShapes, pathThrough, round } from './course-shapes';
 import { courseInWords, estimateInWords, outcomesInWords } from './course-words';
@@ -16,12 +16,41 @@ function Text({ label, className }: { label: CourseText; className: string }) {
   );
 }
 
+/** Whether a course needs more room than a page has, and keeps its own size in a frame that scrolls. */
+const isWide = ({ width }: CourseShapes) => width > 900;
+
+/** The doses' names once more, standing still at the left of a frame that scrolls, at the drawing's own size. */
+function StandingDoses({ shapes, ground }: { shapes: CourseShapes; ground: 'stone' | 'paper' }) {
+  const scale = isWide(shapes) ? 1 : 0.8;
+  return (
+    <div
+      aria-hidden="true"
+      className={`sticky left-0 z-10 w-0 flex-none print:hidden ${isWide(shapes) ? '' : 'md:hidden'}`}
+    >
+      <svg
+        viewBox={`0 0 ${shapes.left} ${shapes.height}`}
+        width={round(shapes.left * scale)}
+        height={round(shapes.height * scale)}
+        className="block max-w-none font-sans"
+      >
+        <rect
+          width={shapes.left - 1}
+          height={shapes.height}
+          className={ground === 'stone' ? 'fill-stone' : 'fill-paper'}
+        />
+        {shapes.doseLabels.map((label) => (
+          <Text key={label.y} label={label} className="fill-ink-soft" />
+        ))}
+      </svg>
+    </div>
+  );
+}
+
 /** The drawing alone. */
-export function CourseDrawing({ data }: { data: CourseData }) {
+function CourseDrawing({ data, shapes }: { data: CourseData; shapes: CourseShapes }) {
   const id = useId();
-  const shapes = courseShapes(data);
   const { water } = shapes;
-  const wide = shapes.width > 900;
+  const wide = isWide(shapes);
   return (
     <svg
       viewBox={`0 0 ${shapes.width} ${shapes.height}`}
@@ -29,7 +58,9 @@ export function CourseDrawing({ data }: { data: CourseData }) {
       height={shapes.height}
       role="img"
       aria-labelledby={`${id}-title ${id}-desc`}
-      className={`block h-auto font-sans ${wide ? 'max-w-none min-w-full print:w-full' : 'w-180 max-w-none md:w-full md:max-w-265'}`}
+      className={`block flex-none font-sans ${
+        wide ? 'max-w-none print:h-auto print:w-full' : 'h-auto w-180 max-w-none md:w-full md:max-w-265'
+      }`}
     >
       <title id={`${id}-title`}>Course of doses</title>
       <desc id={`${id}-desc`}>{courseInWords(data)}</desc>
@@ -79,9 +110,11 @@ export function CourseDrawing({ data }: { data: CourseData }) {
         </g>
       ))}
       {water ? <Text label={water.label} className="fill-water-deep font-semibold" /> : null}
-      {shapes.doseLabels.map((label) => (
-        <Text key={label.y} label={label} className="fill-ink-soft" />
-      ))}
+      <g className={wide ? 'hidden print:inline' : 'hidden md:inline print:inline'}>
+        {shapes.doseLabels.map((label) => (
+          <Text key={label.y} label={label} className="fill-ink-soft" />
+        ))}
+      </g>
       {shapes.cohortLabels.map((label) => (
         <Text key={label.x} label={label} className={label.strong ? 'fill-ink font-bold' : 'fill-ink-soft'} />
       ))}
@@ -108,17 +141,27 @@ function rowsOf(data: CourseData): Row<'cohort' | 'dose' | 'state' | 'outcomes'>
 /**
  * The course of doses: the same drawing in the trial's header, the report and the packet, from data already cut to what
  * the reader may see. With the marks' key and a table for whoever does not read drawings.
+ * @param ground what it stands on: stone in the trial's header, paper in a sheet
  */
-export function Course({ data, table = true }: { data: CourseData; table?: boolean }) {
-  const { currentX, width } = courseShapes(data);
+export function Course({
+  data,
+  table = true,
+  ground = 'stone',
+}: {
+  data: CourseData;
+  table?: boolean;
+  ground?: 'stone' | 'paper';
+}) {
+  const shapes = courseShapes(data);
   const outcomes = data.cohorts.flatMap(({ marks }) => marks ?? []);
   const marked = data.cohorts.some(({ marks }) => marks !== undefined);
   const also = (['not-evaluable', 'pending'] as const).filter((outcome) => outcomes.includes(outcome));
   const estimate = estimateInWords(data);
   return (
     <figure className="min-w-0">
-      <CourseFrame at={currentX / width}>
-        <CourseDrawing data={data} />
+      <CourseFrame at={shapes.currentX / shapes.width}>
+        <StandingDoses shapes={shapes} ground={ground} />
+        <CourseDrawing data={data} shapes={shapes} />
       </CourseFrame>
       <figcaption className="mt-1 flex flex-wrap items-start gap-x-6 gap-y-1 md:pl-12">
         {marked && data.labels ? <OutcomeLegend labels={data.labels} also={also} /> : null}

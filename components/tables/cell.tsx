@@ -36,20 +36,22 @@ export function CellContent({
   }
 }
 
+/** The side of a column: numbers and results to the right, with room before what follows. */
+function sideClass({ kind, end }: Column): string {
+  return kind === 'number' || end ? 'pr-6 pl-3 text-right' : 'pr-3 text-left';
+}
+
 /** The header's class: small, soft, on the ink rule; numbers to the right. */
 export function headerClass(column: Column): string {
-  return `border-b border-ink bg-inherit py-1 pr-3 align-bottom text-xs font-semibold text-ink-soft last:pr-0 ${
-    column.kind === 'number' ? 'text-right' : 'text-left'
-  }`;
+  return `border-b border-ink bg-inherit py-1 align-bottom text-xs font-semibold text-ink-soft last:pr-0 ${sideClass(column)}`;
 }
 
 /** A cell's class; stacked tables show it on a phone with its header before it. */
 export function cellClass(column: Column, stacked: boolean): string {
-  const side = column.kind === 'number' ? 'text-right' : 'text-left';
   const phone = stacked
-    ? 'max-md:border-0 max-md:py-0.5 max-md:text-left max-md:before:mr-1 max-md:before:text-xs max-md:before:text-ink-soft max-md:before:content-[attr(data-header)]'
+    ? 'max-md:border-0 max-md:px-0 max-md:py-0.5 max-md:text-left max-md:before:mr-1 max-md:before:text-xs max-md:before:text-ink-soft max-md:before:content-[attr(data-header)]'
     : '';
-  return `border-b border-line py-1.75 pr-3 align-top font-normal last:pr-0 ${side} ${
+  return `border-b border-line py-1.75 align-top font-normal last:pr-0 ${sideClass(column)} ${
     column.strong ? 'font-semibold' : ''
   } ${phone}`;
 }

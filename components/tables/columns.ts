@@ -25,6 +25,8 @@ export interface Column<Key extends string = string> {
   rowHeader?: boolean;
   /** Shown in bold: the figure one came for. */
   strong?: boolean;
+  /** Set to the right, for results that are not all numbers; numbers always are. */
+  end?: boolean;
   /** Left out at first, to be had from the choice of columns. */
   hiddenAtFirst?: boolean;
   /** Sets a column apart that holds links or buttons only: not sorted, searched or exported. */
