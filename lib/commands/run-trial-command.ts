@@ -13,6 +13,7 @@ import { trialNoticeSchema } from '@/lib/schemas/mail-payloads';
 import { SIGNED_COMMANDS } from '@/lib/schemas/trial-inputs';
 import { SOFTWARE_VERSION } from '@/lib/software-version';
 import { appendToChain, type ChainHead } from './append-to-chain';
+import { checkTeamChange } from './check-team-change';
 import type { ProvenIdentity } from './prove-identity';
 import { queueMails } from './queue-mails';
 import { saveTrialState } from './save-trial-state';
@@ -82,6 +83,7 @@ async function actorOf(request: TrialCommandRequest, state: TrialState): Promise
   }
   if (ADMINISTRATOR_COMMANDS.includes(request.command.type)) {
     if (!person.isAdministrator) throw notFound('This trial');
+    await checkTeamChange(request.command, person.id);
     return { personId: person.id, printedName: person.printedName, role: 'administrator' };
   }
   const member = state.members[person.id];

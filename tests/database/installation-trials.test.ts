@@ -2,13 +2,14 @@ import { randomUUID } from 'node:crypto';
 import { beforeAll, describe, expect, it } from 'vitest';
 import { makeFirstAdministratorLink } from '@/lib/commands/first-administrator-link';
 import { acceptLink } from '@/lib/commands/installation/accept-link';
-import { addSiteToTrial, endMembership, grantMembership } from '@/lib/commands/installation/change-team';
 import { createSite } from '@/lib/commands/installation/create-site';
 import { createTrial } from '@/lib/commands/installation/create-trial';
 import { disablePerson } from '@/lib/commands/installation/disable-person';
 import { retryMail } from '@/lib/commands/installation/retry-mail';
 import type { AdministratorRequest } from '@/lib/commands/installation/run-installation-command';
+import { runTrialCommand } from '@/lib/commands/run-trial-command';
 import { models } from '@/lib/db/connection';
+import type { TrialInput } from '@/lib/schemas/trial-inputs';
 import { verifyEveryChain, verifyStoredChain } from '@/lib/queries/verify-chain';
 import {
   makeActive,
@@ -31,6 +32,14 @@ beforeAll(async () => {
   administrator = await makeFirstAdministrator();
   coordinator = (await makeActive(administrator)).personId;
 });
+
+type TeamRequest = AdministratorRequest & { trialCode: string };
+const addSiteToTrial = (request: TeamRequest, input: TrialInput<'add-site'>) =>
+  runTrialCommand({ ...request, command: { type: 'add-site', input } });
+const grantMembership = (request: TeamRequest, input: TrialInput<'grant-membership'>) =>
+  runTrialCommand({ ...request, command: { type: 'grant-membership', input } });
+const endMembership = (request: TeamRequest, input: TrialInput<'end-membership'>) =>
+  runTrialCommand({ ...request, command: { type: 'end-membership', input } });
 
 const headOfInstallation = async () =>
   (await models().Installation.findByPk(1, { rejectOnEmpty: true })).chainSequence;
