@@ -109,7 +109,7 @@ function gainLines(
     },
     {
       ...shared,
-      id: 'difference',
+      id: 'difference-expected',
       formula: '{proportion} − {expected}',
       numbers: { proportion: probability(proportion, 'ȳ'), expected: probability(b, 'b') },
       result: signed(proportion - b),

@@ -127,7 +127,7 @@ function valueLines(
     means,
     {
       ...shared,
-      id: 'virtual',
+      id: 'unbounded',
       symbol: { name: 'x', index: k + 1 },
       formula: 'x_[k] − (V_[k] − {target}) / (k × {slope}), k = {k}',
       numbers: { target: numbers.target, slope: numbers.slope, k: exact(k, 'k') },
@@ -135,7 +135,7 @@ function valueLines(
     },
     {
       ...shared,
-      id: 'bounded-value',
+      id: 'next',
       symbol: { name: 'x', index: k + 1 },
       formula: 'between {lowest} and {highest}',
       numbers: {

@@ -8,6 +8,7 @@ import {
   computedDose,
   exact,
   exactDose,
+  posterior,
   probability,
   type ReasonCode,
   type TraceLine,
@@ -88,7 +89,10 @@ function riseLine(compiled: CompiledDesign, trial: TrialState): TraceLine {
       : { x: computed(lower, 'g'), step: exact(rise.step), bound };
   return {
     ...shared,
-    formula: rise.kind === 'fold' ? 'at most {factor} × {dose} = {bound}' : 'at most {x} + {step}, {bound}',
+    formula:
+      rise.kind === 'fold'
+        ? 'at most {factor} × {dose} = {bound} {unit}'
+        : 'at most {x} + {step}: {bound} {unit}',
     numbers,
     result: acted ? bound : NOT_REACHED,
     acted,
@@ -107,7 +111,7 @@ function projectionLine(compiled: CompiledDesign, trial: TrialState): TraceLine 
   return {
     id: 'projection',
     step: 3,
-    formula: '{low} to {high}',
+    formula: '{low} to {high} {unit}',
     numbers: ends,
     result: acted ? workingDose(compiled, after) : { word: 'inside' },
     acted,
@@ -127,10 +131,10 @@ function nearestLine(compiled: CompiledDesign, trial: TrialState): TraceLine {
   if (index < last) numbers.high = workingDose(compiled, midpoint(doses, index));
   const formula =
     index === 0
-      ? 'midpoint above {high}'
+      ? 'midpoint above {high} {unit}'
       : index === last
-        ? 'midpoint below {low}'
-        : 'midpoints {low} and {high}';
+        ? 'midpoint below {low} {unit}'
+        : 'midpoints {low} and {high} {unit}';
   const tie = isTie(doses, index, x) || isTie(doses, index - 1, x);
   const beyond = x < doses.working(0) || x > doses.working(last);
   const acted = doses.working(index) !== x;
@@ -156,7 +160,7 @@ function riseOnDoseLines(compiled: CompiledDesign, trial: TrialState): TraceLine
     {
       id: 'largest-rise',
       step: 4,
-      formula: 'rounded {dose} is above {bound}',
+      formula: 'rounded {dose} is above {bound} {unit}',
       numbers: {
         dose: doseAt(compiled, before),
         bound: workingDose(compiled, trial.guard[GUARD.RISE_BOUND] as number),
@@ -259,7 +263,7 @@ function closedLine(compiled: CompiledDesign, trial: TrialState): TraceLine {
     cutoff: exact(settings.cutoff),
     ...(enough
       ? {
-          posterior: probability(
+          posterior: posterior(
             exceedanceProbability(judged.y, judged.n, target, settings.priorA, settings.priorB),
           ),
         }

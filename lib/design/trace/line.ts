@@ -10,6 +10,8 @@ export type NumberForm =
   | 'signed'
   /** A probability. */
   | 'probability'
+  /** A posterior probability, finer so that it does not round onto its cutoff. */
+  | 'posterior'
   /** An exact dose in the trial's unit (decimal text). */
   | 'dose'
   /** A computed dose in the trial's unit. */
@@ -28,23 +30,23 @@ export type TraceResult = TraceNumber | { readonly word: ResultWord };
 export type ResultWord =
   'not-reached' | 'inside' | 'kept' | 'none' | 'go-on' | 'stop' | 'off' | 'enough' | 'not-judged';
 
-/** The key of a line's label; the words stand in `labels.ts`. */
+/** The key of a line's label; the words stand in `words.ts`. */
 export type LineId =
   | 'observed'
   | 'given'
   | 'difference'
+  | 'difference-expected'
   | 'start'
   | 'gain'
   | 'probit-gain'
   | 'expected'
   | 'prior-variance'
   | 'kesten-index'
-  | 'virtual'
+  | 'unbounded'
   | 'means'
   | 'slope'
   | 'fit'
   | 'next'
-  | 'bounded-value'
   | 'as-dose'
   | 'stands'
   | 'largest-rise'
@@ -67,7 +69,6 @@ export interface TraceReason {
 
 export type ReasonCode =
   | 'lowered-release'
-  | 'no-gain-yet'
   | 'largest-rise-bounds-value'
   | 'largest-rise-bounds-dose'
   | 'projected-up'
@@ -106,7 +107,7 @@ export interface TraceLine {
   readonly symbol?: { readonly name: string; readonly index?: number };
   /**
    * Template of the formula: `{name}` prints a number of `numbers`, `^{name}` and `_{name}` print it raised or
-   * lowered, `^[text]` and `_[text]` raise or lower a text; all else stands as it is.
+   * lowered, `^[text]` and `_[text]` raise or lower a text, `{unit}` prints the trial's unit; all else stands as it is.
    */
   readonly formula: string;
   readonly numbers: Readonly<Record<string, TraceNumber>>;
@@ -136,6 +137,10 @@ export function signed(value: number, symbol?: string): TraceNumber {
 /** A probability. */
 export function probability(value: number, symbol?: string): TraceNumber {
   return numberOf(value, 'probability', symbol);
+}
+/** A posterior probability. */
+export function posterior(value: number): TraceNumber {
+  return numberOf(value, 'posterior', undefined);
 }
 /** An exact dose. */
 export function exactDose(value: Dose, symbol?: string): TraceNumber {

@@ -49,7 +49,7 @@ function repeatedLines(compiled: CompiledDesign, trial: TrialState): TraceLine[]
       id: 'repeated',
       step: 8,
       formula:
-        '{dose} recommended {times} of {needed} times in a row, {subjects} of {minimum} subjects at it',
+        '{dose} {unit} recommended {times} of {needed} times in a row, {subjects} of {minimum} subjects at it',
       numbers: {
         dose: exactDose(compiled.doses.dose(final)),
         times: exact(trial.repeats),
