@@ -9,3 +9,6 @@ const LINK_PAGES = {
 export function linkPath(purpose: keyof typeof LINK_PAGES, token: string): string {
   return `/${LINK_PAGES[purpose]}/${token}`;
 }
+
+/** Mails that carry a link: its token is wiped from the outbox once the mail was sent, overtaken or given up. */
+export const LINK_MAIL_KINDS = ['invitation', 'password-reset'] as const;

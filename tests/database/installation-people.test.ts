@@ -11,6 +11,14 @@ import { inTransaction } from '@/lib/db/transaction';
 import { sha256 } from '@/lib/hash';
 import { verifyStoredChain } from '@/lib/queries/verify-chain';
 import {
+  type ClaimedMail,
+  claimMail,
+  markFailed,
+  markOvertaken,
+  markSent,
+  MOST_REFUSALS,
+} from '@/lib/worker/outbox';
+import {
   makeActive,
   makeFirstAdministrator,
   makeInvited,
@@ -319,6 +327,38 @@ describe('disabling', () => {
 describe('the first administrator', () => {
   it('gets no link where there is an administrator', async () => {
     expect(await makeFirstAdministratorLink('http://localhost')).toBeNull();
+  });
+});
+
+describe('the token of a link mail', () => {
+  const payloadOf = async (id: string) =>
+    (await models().OutboxMail.findByPk(id, { rejectOnEmpty: true })).payload;
+  type End = (mail: ClaimedMail) => Promise<boolean>;
+  const ends: [string, number, End][] = [
+    ['sent', 1, markSent],
+    ['overtaken', 1, markOvertaken],
+    ['given up', MOST_REFUSALS, (mail) => markFailed(mail, 'refused', true)],
+  ];
+
+  it.each(ends)('is wiped from the outbox once the mail was %s', async (_state, attempts, end) => {
+    await inTransaction(() => models().OutboxMail.update({ state: 'sent' }, { where: { state: 'queued' } }));
+    const { personId } = await makeInvited(administrator);
+    const token = await tokenMailedTo(personId);
+    const claimed = await claimMail('a worker');
+    if (claimed === null) throw new Error('No mail waits.');
+    expect(claimed.personId).toBe(personId);
+    await inTransaction(() => models().OutboxMail.update({ attempts }, { where: { id: claimed.id } }));
+    expect(await payloadOf(claimed.id)).toContain(token);
+    expect(await end({ ...claimed, attempts })).toBe(true);
+    expect(await payloadOf(claimed.id)).not.toContain(token);
+  });
+
+  it('stays while the mail is to be tried again', async () => {
+    const { personId } = await makeInvited(administrator);
+    const claimed = await claimMail('a worker');
+    if (claimed === null) throw new Error('No mail waits.');
+    expect(await markFailed(claimed, 'busy', true)).toBe(true);
+    expect(await payloadOf(claimed.id)).toContain(await tokenMailedTo(personId));
   });
 });
 

@@ -1,12 +1,10 @@
+import { LINK_MAIL_KINDS } from '@/lib/schemas/one-time-link';
 import {
   type InstallationContext,
   type InstallationPayloads,
   refuse,
   requireAdministrator,
 } from './decision';
-
-/** Mails that carry a link: their token is wiped once they were sent or given up. */
-export const LINK_MAIL_KINDS: readonly string[] = ['invitation', 'password-reset'];
 
 /** Puts a mail that was given up back into the queue. */
 export function retryMail(
@@ -17,7 +15,7 @@ export function retryMail(
   if (mail.state !== 'dead') {
     refuse('refused', 'Not queued again. Only a mail that was given up can be tried again.');
   }
-  if (LINK_MAIL_KINDS.includes(mail.kind)) {
+  if (LINK_MAIL_KINDS.some((kind) => kind === mail.kind)) {
     refuse(
       'refused',
       'Not queued again. The link of this mail was wiped when the mail was given up; send a new one from the person’s page.',
