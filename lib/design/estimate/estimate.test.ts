@@ -163,6 +163,21 @@ describe('estimateTarget', () => {
     expect(result.flags).toContain('interval-not-bounded');
   });
 
+  it("Firth's fit is used where asked for, also where the maximum-likelihood fit exists", () => {
+    const firth = estimateTarget(rangeDesign(), rising, { estimator: estimators[5] });
+    expect(firth.fit?.method).toBe('firth');
+    expect(Math.abs(firth.fit?.slope as number)).toBeLessThan(
+      estimateTarget(rangeDesign(), rising, { estimator: estimators[4] }).fit?.slope as number,
+    );
+  });
+
+  it('centred isotonic: the bootstrap is repeatable and depends on its seed', () => {
+    const at = (seed: number) => estimateTarget(rangeDesign(), rising, { estimator: estimators[3], seed });
+    expect(at(4)).toEqual(at(4));
+    expect(at(4).bootstrap).toMatchObject({ seed: 4, draws: 2000 });
+    expect(at(4).interval).not.toEqual(at(5).interval);
+  });
+
   it('isotonic: doses off the levels count at the nearest level, ties lower', () => {
     const design = { ...rangeDesign(), doses: { kind: 'levels' as const, levels: ['20', '30', '40', '50'] } };
     const exact = estimateTarget(design, rising, { estimator: estimators[2] });
