@@ -10,13 +10,9 @@ export function facts(values: Readonly<Record<string, string>>): Block {
   return { type: 'facts', facts: Object.entries(values).map(([label, value]): Fact => ({ label, value })) };
 }
 
-/** The one thing to do. `path` is below the installation's address; its parts are encoded. */
-export function action(label: string, ...path: (string | number)[]): Block {
-  return {
-    type: 'action',
-    label,
-    path: path.map((part) => `/${encodeURIComponent(String(part))}`).join(''),
-  };
+/** The one thing to do. `path` is below the installation's address; codes and tokens need no encoding. */
+export function action(label: string, path: string): Block {
+  return { type: 'action', label, path };
 }
 
 export const caution: Block = { type: 'caution' };

@@ -17,7 +17,7 @@ export function designReturned(payload: MailPayloadOf<'design-returned'>): Messa
         'The reason stands on the design’s page. Change the design there and submit it again.',
       ),
       facts({ Trial: trialCode, Design: `version ${designVersion}`, Returned: utcTime(occurredAt) }),
-      action('Open the design', 'trials', trialCode, 'design'),
+      action('Open the design', `/trials/${trialCode}/design`),
     ],
     because: `you are a statistician of ${trialCode}`,
     chainHead,

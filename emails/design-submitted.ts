@@ -18,7 +18,7 @@ export function designSubmitted(payload: MailPayloadOf<'design-submitted'>): Mes
         'After the approval the starting dose waits for signatures like every other dose.',
       ),
       facts({ Trial: trialCode, Design: `version ${designVersion}`, Submitted: utcTime(occurredAt) }),
-      action('Read the design', 'trials', trialCode, 'design'),
+      action('Read the design', `/trials/${trialCode}/design`),
     ],
     because: `you are a safety reviewer of ${trialCode}`,
     chainHead,

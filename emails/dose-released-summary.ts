@@ -14,13 +14,13 @@ export function doseReleasedSummary(payload: MailPayloadOf<'dose-released-summar
     tone: 'plain',
     blocks: [
       { type: 'dose', label: 'Signed dose', dose: doseText(payload, payload.dose) },
+      caution,
       paragraph(
         'The safety reviewers have signed this dose, and the sites may reserve places.',
         'The course of signed doses and the enrolment stand on the summary page.',
       ),
       facts({ Trial: trialCode, Cohort: String(cohortNumber), Released: utcTime(occurredAt) }),
-      action('Open the summary', 'trials', trialCode, 'summary'),
-      caution,
+      action('Open the summary', `/trials/${trialCode}/summary`),
     ],
     because: `you are the sponsor’s reader of ${trialCode}`,
     chainHead,

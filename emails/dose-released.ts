@@ -14,6 +14,7 @@ export function doseReleased(payload: MailPayloadOf<'dose-released'>): Message {
     tone: 'plain',
     blocks: [
       { type: 'dose', label: 'Released dose', dose: doseText(payload, payload.dose) },
+      caution,
       paragraph(
         'This message is a notice. Before you dose a subject, read the dose on the cohort’s page: the trial may have been halted since this was sent.',
       ),
@@ -25,8 +26,7 @@ export function doseReleased(payload: MailPayloadOf<'dose-released'>): Message {
         'Signed by': signers.join(', '),
         Released: utcTime(occurredAt),
       }),
-      action(`Open cohort ${cohortNumber}`, 'trials', trialCode, 'cohorts', cohortNumber),
-      caution,
+      action(`Open cohort ${cohortNumber}`, `/trials/${trialCode}/cohorts/${cohortNumber}`),
     ],
     because: `you record for a site of ${trialCode}`,
     chainHead,

@@ -1,4 +1,5 @@
 import type { MailPayloadOf } from '@/lib/schemas/mail-payloads';
+import { linkPath } from '@/lib/schemas/one-time-link';
 import { action, paragraph } from './blocks';
 import type { Message } from './message';
 import { utcTime } from './utc-time';
@@ -12,10 +13,10 @@ export function invitation({ token, expiresAt }: MailPayloadOf<'invitation'>): M
     tone: 'plain',
     blocks: [
       paragraph(
-        'An administrator of this installation of Stepwell has made an account with your e-mail address.',
+        'An administrator of this installation of Stepwell has made an account for you at this address.',
         'Choose a password to begin.',
       ),
-      action('Choose a password', 'invitation', token),
+      action('Choose a password', linkPath('invitation', token)),
       paragraph(
         `The link works once, until ${utcTime(expiresAt)}. After that, ask the administrator for a new one.`,
         'Do not forward this message: who has the link can take the account.',

@@ -18,7 +18,7 @@ export function packetReturned(payload: MailPayloadOf<'packet-returned'>): Messa
         'The questions stand on the cohort’s page.',
       ),
       facts({ Trial: trialCode, Cohort: String(cohortNumber), Returned: utcTime(occurredAt) }),
-      action(`Open cohort ${cohortNumber}`, 'trials', trialCode, 'cohorts', cohortNumber),
+      action(`Open cohort ${cohortNumber}`, `/trials/${trialCode}/cohorts/${cohortNumber}`),
     ],
     because: `you record for a site of ${trialCode}`,
     chainHead,

@@ -1,4 +1,5 @@
 import type { MailPayloadOf } from '@/lib/schemas/mail-payloads';
+import { linkPath } from '@/lib/schemas/one-time-link';
 import { action, paragraph } from './blocks';
 import type { Message } from './message';
 import { utcTime } from './utc-time';
@@ -11,8 +12,8 @@ export function passwordReset({ token, expiresAt }: MailPayloadOf<'password-rese
     title: 'Choose a new password',
     tone: 'plain',
     blocks: [
-      paragraph('A new password was asked for, for the account with your e-mail address.'),
-      action('Choose a new password', 'reset', token),
+      paragraph('A new password was asked for, for the account at this address.'),
+      action('Choose a new password', linkPath('password-reset', token)),
       paragraph(
         `The link works once, until ${utcTime(expiresAt)}. After that, ask for a new one on the sign-in page.`,
         'Do not forward this message: who has the link can take the account.',

@@ -23,7 +23,7 @@ export function recommendationReady(payload: MailPayloadOf<'recommendation-ready
         'A release needs the signatures of the quorum on the same dose. One reviewer may return the packet or halt the trial.',
       ),
       facts({ Trial: trialCode, Packet: packet, Computed: utcTime(occurredAt) }),
-      action('Open the review', 'trials', trialCode, 'review'),
+      action('Open the review', `/trials/${trialCode}/review`),
       caution,
     ],
     because: `you are a safety reviewer of ${trialCode}`,

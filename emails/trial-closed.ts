@@ -17,7 +17,7 @@ export function trialClosed(payload: MailPayloadOf<'trial-closed'>): Message {
         'Subjects dosed already finish their window, and their outcomes and corrections are still recorded.',
       ),
       facts({ Trial: trialCode, Closed: utcTime(occurredAt) }),
-      action('Open the trial', 'trials', trialCode),
+      action('Open the trial', `/trials/${trialCode}`),
     ],
     because: `you have a role in ${trialCode}`,
     chainHead,

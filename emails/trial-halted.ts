@@ -21,7 +21,7 @@ export function trialHalted(payload: MailPayloadOf<'trial-halted'>): Message {
         'In an emergency use the site’s own emergency procedure, not this message.',
       ),
       facts({ Trial: trialCode, Halted: utcTime(occurredAt) }),
-      action('Open the trial', 'trials', trialCode),
+      action('Open the trial', `/trials/${trialCode}`),
     ],
     because: `you have a role in ${trialCode}`,
     chainHead,

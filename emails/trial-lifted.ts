@@ -17,7 +17,7 @@ export function trialLifted(payload: MailPayloadOf<'trial-lifted'>): Message {
         'Read on the trial’s page which of the two holds before anybody is dosed.',
       ),
       facts({ Trial: trialCode, Lifted: utcTime(occurredAt) }),
-      action('Open the trial', 'trials', trialCode),
+      action('Open the trial', `/trials/${trialCode}`),
     ],
     because: `you have a role in ${trialCode}`,
     chainHead,

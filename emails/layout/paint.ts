@@ -10,15 +10,16 @@ type Paint = Partial<Record<keyof typeof PROPERTIES, Colour>>;
  * The class and style attributes of an element. The light colours stand in the element itself, for mail programs that
  * drop style sheets; the classes let the style sheet of `darkStyles` change them.
  * @param css more declarations, ended by semicolons
+ * @param names more classes
  */
-export function painted(paint: Paint, css = ''): Html {
+export function painted(paint: Paint, css = '', ...names: string[]): Html {
   const entries = (Object.entries(paint) as [keyof typeof PROPERTIES, Colour][]).map(([use, colour]) => ({
     name: `${use}-${colour}`,
     declaration: `${PROPERTIES[use]}:${PALETTE[colour].light};`,
   }));
-  const names = entries.map(({ name }) => name).join(' ');
+  const classes = [...names, ...entries.map(({ name }) => name)].join(' ');
   const style = css + entries.map(({ declaration }) => declaration).join('');
-  return html`class="${names}" style="${style}"`;
+  return html`class="${classes}" style="${style}"`;
 }
 
 /** The style sheet that turns every colour dark for readers whose device is set so. */
