@@ -1,3 +1,4 @@
+import Link from 'next/link';
 import { connection } from 'next/server';
 import { PageTitle } from '@/components/layout/page-title';
 import { Sheet } from '@/components/layout/sheet';
@@ -11,7 +12,9 @@ export default async function NotFound() {
         Not found
       </PageTitle>
       <p>
-        <a href="/">Go to Today</a>
+        <Link href="/" prefetch={false}>
+          Go to Today
+        </Link>
       </p>
     </Sheet>
   );

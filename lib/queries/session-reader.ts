@@ -16,6 +16,8 @@ export interface Reader extends Actor {
   /** The digest that names the session; not the secret value. */
   readonly sessionId: string;
   readonly sessionLastSeenAt: string;
+  /** When the session ends whatever happens. */
+  readonly sessionExpiresAt: string;
   /** When the session ends if nothing more is asked for. */
   readonly sessionEndsAt: string;
   /** The server's clock at this request; in a test installation with its offset. */
@@ -72,6 +74,7 @@ export async function sessionReader(sessionId: string, now: number): Promise<Rea
     memberships: membershipsOf(rows),
     sessionId,
     sessionLastSeenAt: first.lastSeenAt.toISOString(),
+    sessionExpiresAt: first.expiresAt.toISOString(),
     sessionEndsAt: new Date(sessionEndsAt(first)).toISOString(),
     now: new Date(now + Number(first.clockOffset)).toISOString(),
     installationKind: first.kind,

@@ -41,7 +41,11 @@ export async function requireReader(): Promise<Reader> {
   const reader = await currentReader();
   if (reader !== null) return reader;
   const address = (await headers()).get('x-stepwell-address');
-  redirect(address === null ? '/sign-in?ended=1' : `/sign-in?ended=1&next=${encodeURIComponent(address)}`);
+  redirect(
+    address === null
+      ? '/sign-in?because=ended'
+      : `/sign-in?because=ended&next=${encodeURIComponent(address)}`,
+  );
 }
 
 /** The reader's standing membership in the trial of this code, or null. */

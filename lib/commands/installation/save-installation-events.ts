@@ -1,6 +1,7 @@
 import { Op } from 'sequelize';
 import type { InstallationEventPayload } from '@/lib/conduct/installation/events';
 import { models } from '@/lib/db/connection';
+import { endSessionsOf } from '../end-session';
 
 /** What rows hold and events must not. */
 export interface EventDetails {
@@ -9,15 +10,13 @@ export interface EventDetails {
   readonly printedName?: string | undefined;
   readonly passwordHash?: string;
   readonly siteName?: string;
+  /** The session that stands when a person changes their own password: the one they do it in. */
+  readonly standingSessionId?: string;
 }
 
 function needed<T>(value: T | undefined, what: string): T {
   if (value === undefined) throw new Error(`An event came without its ${what}.`);
   return value;
-}
-
-async function endSessions(personId: string, at: Date): Promise<void> {
-  await models().Session.update({ endedAt: at }, { where: { personId, endedAt: null } });
 }
 
 /** Links that stand stop working now, and a mail that still waits with one is not sent. */
@@ -96,10 +95,16 @@ async function saveEvent(payload: InstallationEventPayload, details: EventDetail
         { passwordHash: needed(details.passwordHash, 'password hash') },
         { where: { id: payload.personId } },
       );
-      return endSessions(payload.personId, at);
+      return endSessionsOf(payload.personId, at);
+    case 'password-changed':
+      await Person.update(
+        { passwordHash: needed(details.passwordHash, 'password hash') },
+        { where: { id: payload.personId } },
+      );
+      return endSessionsOf(payload.personId, at, details.standingSessionId);
     case 'person-disabled':
       await Person.update({ state: 'disabled' }, { where: { id: payload.personId } });
-      return endSessions(payload.personId, at);
+      return endSessionsOf(payload.personId, at);
     case 'person-enabled':
       await Person.update({ state: payload.state }, { where: { id: payload.personId } });
       return;

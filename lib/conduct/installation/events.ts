@@ -27,6 +27,7 @@ export const installationEventSchema = z.discriminatedUnion('kind', [
   event('password-reset-requested', { personId: id }),
   event('person-activated', { personId: id, linkDigest: digest, isAdministrator: z.boolean() }),
   event('password-set', { personId: id, linkDigest: digest }),
+  event('password-changed', { personId: id }),
   event('person-disabled', { personId: id }),
   event('person-enabled', { personId: id, state: z.enum(['invited', 'active']) }),
   event('site-created', { siteId: id, code: z.string().max(12), timeZone: z.string().max(64) }),
@@ -42,9 +43,9 @@ export const INSTALLATION_EVENT_SCHEMA_VERSION = 1;
 
 /**
  * In which capacity somebody acts on the installation: its administrator; a person with the link mailed to them; a
- * visitor nobody knows (a reset asked for at the sign-in page); the server by itself.
+ * person on their own account; a visitor nobody knows (a reset asked for at the sign-in page); the server by itself.
  */
-export type InstallationRole = 'administrator' | 'link-holder' | 'visitor' | 'system';
+export type InstallationRole = 'administrator' | 'link-holder' | 'account-holder' | 'visitor' | 'system';
 
 /** An event as decided: who, in which capacity, when, what. Its place in the chain is given when it is stored. */
 export interface InstallationEvent {
