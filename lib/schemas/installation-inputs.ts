@@ -2,7 +2,7 @@ import { z } from 'zod';
 import { emailSchema } from './email';
 import { newPasswordSchema } from './password';
 import { plainText } from './text';
-import { idSchema, trialCodeSchema } from './trial-inputs';
+import { chosenIdSchema, idSchema, trialCodeSchema } from './trial-inputs';
 
 /** Longest texts of people, sites and trials, the same in forms, actions and columns. */
 export const INSTALLATION_LIMITS = {
@@ -95,9 +95,7 @@ export const installationInputSchemas = {
   'create-trial': z.strictObject({
     code: z.preprocess((value) => (typeof value === 'string' ? value.trim() : value), trialCodeSchema),
     title: plainText('The title', INSTALLATION_LIMITS.trialTitle, { minimum: 5 }),
-    statisticianId: idSchema
-      .or(z.literal(''))
-      .pipe(z.string().min(1, { error: 'Choose the first statistician; they write the design.' })),
+    statisticianId: chosenIdSchema('Choose the first statistician; they write the design.'),
   }),
   'retry-mail': z.strictObject({ mailId: idSchema }),
 } as const;

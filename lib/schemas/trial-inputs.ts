@@ -13,9 +13,14 @@ export const TEXT_LIMITS = {
   email: 254,
 } as const;
 
+const ID = /^[0-9a-f]{8}(-[0-9a-f]{4}){3}-[0-9a-f]{12}$/;
+
 export const idSchema = z
   .string({ error: 'The record is not named.' })
-  .regex(/^[0-9a-f]{8}(-[0-9a-f]{4}){3}-[0-9a-f]{12}$/, { error: 'The record is not named.' });
+  .regex(ID, { error: 'The record is not named.' });
+
+/** The id of a record a person chooses from a list; `advice` is said while none is chosen. */
+export const chosenIdSchema = (advice: string) => z.string({ error: advice }).regex(ID, { error: advice });
 
 /** An instant as ISO 8601 with its offset, read as UTC to the millisecond. */
 export const instantSchema = z
@@ -136,9 +141,9 @@ export const trialInputSchemas = {
       }
     }),
   'resubmit-cohort': z.strictObject({ cohortId: idSchema }),
-  'add-site': z.strictObject({ siteId: idSchema }),
+  'add-site': z.strictObject({ siteId: chosenIdSchema('Choose a site.') }),
   'grant-membership': z.strictObject({
-    personId: idSchema,
+    personId: chosenIdSchema('Choose a person.'),
     role: z.enum(TRIAL_ROLES, { error: 'Choose a role.' }),
     siteIds: z.array(idSchema).max(100).default([]),
   }),
