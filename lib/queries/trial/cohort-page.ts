@@ -1,3 +1,4 @@
+import { whyNoNewSubject } from '@/lib/conduct/decide/slots';
 import type { Cohort, DesignVersion, Outcome, Subject } from '@/lib/conduct/state';
 import { cohortsInOrder, placesOf, revisionsOf } from '@/lib/conduct/trial-facts';
 import { equalDecimals } from '@/lib/design/decimal';
@@ -90,6 +91,8 @@ interface CohortFacts {
 
 interface SiteReading {
   readonly reads: 'own-sites';
+  /** Why nobody may be dosed at this dose now; null while subjects may. */
+  readonly notForDosing: string | null;
   readonly places: readonly CohortPlace[];
 }
 
@@ -282,7 +285,12 @@ export async function cohortPage(
     const shown = { ...facts, reads: 'all' as const, subjects, freePlaces };
     return { ...shown, readAt: trial.now, zone, revision: revisionOf(shown) };
   }
-  const shown = { ...facts, reads: 'own-sites' as const, places: placesFor(trial, cohort, isOwn) };
+  const shown = {
+    ...facts,
+    reads: 'own-sites' as const,
+    notForDosing: whyNoNewSubject(state, cohort, trial.siteIds[0] ?? ''),
+    places: placesFor(trial, cohort, isOwn),
+  };
   return {
     ...shown,
     readAt: trial.now,
