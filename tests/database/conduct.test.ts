@@ -73,7 +73,9 @@ describe('a trial in the tables', () => {
         "CREATE TRIGGER event_payloads_refuse_update BEFORE UPDATE ON event_payloads FOR EACH ROW SIGNAL SQLSTATE '45000' SET MESSAGE_TEXT = 'The trail is append-only.'",
       );
     });
-    expect(await verifyStoredChain(id)).toMatchObject({ firstBreak: { sequence: 2, reason: 'payload-differs' } });
+    expect(await verifyStoredChain(id)).toMatchObject({
+      firstBreak: { sequence: 2, reason: 'payload-differs' },
+    });
   });
 });
 
