@@ -8,10 +8,10 @@ const UPLOAD_ADDRESSES: readonly RegExp[] = [];
 
 /** Pages a visitor sees without being signed in. The API answers for itself, with a status code. */
 const OPEN_ADDRESSES =
-  /^\/(sign-in|sign-out|forgotten-password|reset|invitation|setup|mail|health|api)(\/|$)/;
+  /^\/(sign-in|sign-out|forgotten-password|reset|invitation|setup|caught-mail|health|api)(\/|$)/;
 
 /** Answers that carry their own, narrower content security policy (a caught mail shown in a frame). */
-const OWN_POLICY_ADDRESSES = /^\/(api\/)?mail\/[^/]+\/(html|content)$/;
+const OWN_POLICY_ADDRESSES = /^\/caught-mail\/[^/]+\/html$/;
 
 const SESSION_COOKIE = /^(__Secure-|__Host-)?(next-auth|stepwell)\.session-token(\.\d+)?$/;
 const BODY_METHODS = new Set(['POST', 'PUT', 'PATCH', 'DELETE']);

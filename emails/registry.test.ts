@@ -1,4 +1,4 @@
-import { JSDOM } from 'jsdom';
+// @vitest-environment jsdom
 import { describe, expect, it } from 'vitest';
 import { cautionTexts } from '@/components/caution/caution-texts';
 import { MAIL_KINDS } from '@/lib/schemas/mail-payloads';
@@ -8,7 +8,7 @@ import { renderMail } from './registry';
 
 const URL_OF_INSTALLATION = 'https://stepwell.example.org/base';
 const context = { url: URL_OF_INSTALLATION, recipientName: 'Mara Lindqvist' };
-const documentOf = (html: string): Document => new JSDOM(html).window.document;
+const documentOf = (html: string): Document => new DOMParser().parseFromString(html, 'text/html');
 /** What a reader sees of the HTML, its white space as one blank. */
 const seen = (text: string | null | undefined): string => (text ?? '').replace(/\s+/g, ' ').trim();
 
