@@ -1,5 +1,6 @@
 import { QueryTypes } from 'sequelize';
 import { sequelize } from '@/lib/db/connection';
+import { environment } from '@/lib/env';
 
 /** The most mails one page lists, the newest first. */
 export const MOST_MAILS_LISTED = 200;
@@ -58,4 +59,9 @@ export async function mailList(state: MailState | null): Promise<MailList> {
       nextAttemptAt: row.nextAttemptAt?.toISOString() ?? null,
     })),
   };
+}
+
+/** Whether mail waits until a mail server is configured; a demo or a test catches it instead. */
+export function mailIsHeld(installationKind: 'production' | 'demo' | 'test'): boolean {
+  return installationKind === 'production' && environment().smtpUrl === undefined;
 }
