@@ -18,6 +18,8 @@ const nextConfig: NextConfig = {
   distDir: process.env.NEXT_DIST_DIR ?? '.next',
   reactStrictMode: true,
   poweredByHeader: false,
+  // The development server would print the arguments of actions, passwords among them.
+  logging: { serverFunctions: false },
   serverExternalPackages: ['sequelize', 'mariadb', 'piscina', '@node-rs/argon2', 'pino'],
   experimental: {
     serverActions: { bodySizeLimit: '1mb' },

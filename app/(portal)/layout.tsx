@@ -1,7 +1,9 @@
 import type { ReactNode } from 'react';
+import { SessionWatch } from '@/components/account/session-watch';
 import type { NavItem } from '@/components/layout/nav-link';
 import { TopBar } from '@/components/layout/top-bar';
 import { rolesInWords } from '@/lib/policy/roles-in-words';
+import { requestTime } from '@/lib/server/request-time';
 import { requireReader, type Reader } from '@/lib/server/session';
 import { SignOutButton } from './sign-out-button';
 
@@ -24,6 +26,7 @@ export default async function PortalLayout({ children }: { children: ReactNode }
         signOut={<SignOutButton />}
       />
       {children}
+      <SessionWatch left={Date.parse(reader.sessionEndsAt) - (await requestTime())} />
     </>
   );
 }

@@ -37,7 +37,9 @@ export function ChangePasswordForm({
         help={`At least ${SHORTEST_PASSWORD} characters. You sign with it too.`}
         autoComplete="new-password"
       />
-      <SubmitButton pendingLabel="Changing…">Change password</SubmitButton>
+      <div>
+        <SubmitButton pendingLabel="Changing…">Change password</SubmitButton>
+      </div>
     </ActionForm>
   );
 }

@@ -33,9 +33,11 @@ export function ForgottenPasswordForm({
           autoCapitalize="none"
           spellCheck={false}
         />
-        <SubmitButton variant="primary" pendingLabel="Sending…">
-          Send the link
-        </SubmitButton>
+        <div>
+          <SubmitButton variant="primary" pendingLabel="Sending…">
+            Send the link
+          </SubmitButton>
+        </div>
       </ActionForm>
     </div>
   );

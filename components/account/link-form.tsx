@@ -79,9 +79,11 @@ export function LinkForm({
           help={`At least ${SHORTEST_PASSWORD} characters. Several words that do not belong together are easy to keep; no rules beyond that.`}
           autoComplete="new-password"
         />
-        <SubmitButton variant="primary" pendingLabel="Setting…">
-          {words.button}
-        </SubmitButton>
+        <div>
+          <SubmitButton variant="primary" pendingLabel="Setting…">
+            {words.button}
+          </SubmitButton>
+        </div>
       </ActionForm>
     </div>
   );

@@ -58,7 +58,7 @@ export function SignInForm({ next, accounts }: { next: string; accounts: readonl
           <SubmitButton variant="primary" pendingLabel="Signing in…">
             Sign in
           </SubmitButton>
-          <a href="/forgotten-password" className="text-sm">
+          <a href="/forgotten-password" className="text-sm text-water underline underline-offset-3">
             Forgotten password
           </a>
         </div>
@@ -68,7 +68,7 @@ export function SignInForm({ next, accounts }: { next: string; accounts: readonl
   if (accounts.length === 0) return <div className="max-w-md">{form}</div>;
   return (
     <TwoColumns>
-      {form}
+      <div>{form}</div>
       <DemoAccounts
         accounts={accounts}
         onChoose={({ email, password }) => {

@@ -63,6 +63,13 @@ export function ErrorSummary({ outcome }: { outcome: FormOutcome<unknown> }) {
           ))}
         </ul>
       ) : null}
+      {outcome.kind === 'refused' && outcome.refusal.code === 'signed-out' ? (
+        <p className="mt-1.5">
+          <a href="/sign-in" target="_blank" rel="noopener">
+            Sign in in another tab
+          </a>
+        </p>
+      ) : null}
       {outcome.kind === 'refused' && outcome.refusal.reference ? (
         <p className="mt-1.5 text-sm">
           Reference <code>{outcome.refusal.reference}</code>
