@@ -3,14 +3,15 @@
  * the start script: node --import tsx scripts/prepare-database.ts <kind> <private|given>. What people should
  * read on the way goes to standard error; the last line of standard output is the result as JSON.
  */
-import { existsSync } from 'node:fs';
 import * as mariadb from 'mariadb';
 import { z } from 'zod';
+import { makeFirstAdministratorLink } from '@/lib/commands/first-administrator-link';
 import { closeDatabase, models } from '@/lib/db/connection';
 import { connectorOptions, migrate, pendingMigrations, type InstallationKind } from '@/lib/db/migrate';
 import { quoteName } from '@/lib/db/grants';
 import { inTransaction } from '@/lib/db/transaction';
 import { environment } from '@/lib/env';
+import { loadDemo } from './demo/load';
 
 /** What the start script prints for people. */
 interface Prepared {
@@ -36,12 +37,13 @@ async function main(): Promise<Prepared> {
   let kind = await installationKind();
   if (kind === 'demo' && !(await demoIsLoaded())) {
     if (await hasPeople()) kind = await startDemoOver();
-    await loadDemo();
+    await loadDemoTrials();
   }
   return {
     kind,
     accounts: kind === 'demo' ? await demoAccounts() : [],
-    firstAdministratorLink: kind === 'production' ? await firstAdministratorLink() : null,
+    firstAdministratorLink:
+      kind === 'production' ? await makeFirstAdministratorLink(environment().url) : null,
     warnings,
   };
 }
@@ -89,12 +91,9 @@ async function startDemoOver(): Promise<InstallationKind> {
   return (await migrate(databaseOwnerUrl, databaseUrl, 'demo')).kind;
 }
 
-async function loadDemo(): Promise<void> {
-  const loader = new URL('./demo/load.ts', import.meta.url);
-  if (!existsSync(loader)) return;
+async function loadDemoTrials(): Promise<void> {
   console.error('Loading the demo trials …');
-  const { loadDemo: load } = (await import(loader.href)) as { loadDemo: () => Promise<void> };
-  await load();
+  await loadDemo();
   await inTransaction(async () => {
     await models().Installation.update(
       { demoLoadedAt: new Date() },
@@ -112,16 +111,6 @@ async function demoAccounts(): Promise<Prepared['accounts']> {
     password,
     description,
   }));
-}
-
-/** A new single-use link while the installation has no administrator; the one before it stops counting. */
-async function firstAdministratorLink(): Promise<string | null> {
-  const command = new URL('../lib/commands/first-administrator-link.ts', import.meta.url);
-  if (!existsSync(command)) return null;
-  const { makeFirstAdministratorLink } = (await import(command.href)) as {
-    makeFirstAdministratorLink: (baseUrl: string) => Promise<string | null>;
-  };
-  return makeFirstAdministratorLink(environment().url);
 }
 
 try {

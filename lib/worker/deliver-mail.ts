@@ -32,7 +32,7 @@ export async function deliverNextMail(delivery: MailDelivery): Promise<DeliveryR
   try {
     if (!(await delivery.stillHolds(mail))) {
       await markOvertaken(mail);
-      log().info(facts, 'mail overtaken, not sent');
+      log().debug(facts, 'mail overtaken, not sent');
       return 'done';
     }
     const { subject, html, text } = await delivery.render(mail);
@@ -44,6 +44,6 @@ export async function deliverNextMail(delivery: MailDelivery): Promise<DeliveryR
     return isUnavailable ? 'unavailable' : 'done';
   }
   if (!(await markSent(mail))) log().warn(facts, 'mail sent after its lease had ended');
-  else log().info(facts, 'mail sent');
+  else log().debug(facts, 'mail sent');
   return 'done';
 }

@@ -4,15 +4,13 @@
  */
 import { randomUUID } from 'node:crypto';
 import { hostname } from 'node:os';
-import { renderMail } from '@/emails/registry';
 import { closeDatabase, models } from '../db/connection';
 import { environment } from '../env';
 import { log } from '../log';
-import { causeStillHolds } from '../queries/cause-still-holds';
-import { deliverNextMail, type MailDelivery, type RenderedMail } from './deliver-mail';
+import { deliverNextMail, type MailDelivery } from './deliver-mail';
 import { repeat } from './loop';
 import { type MailCatcher, startMailCatcher } from './mail-catcher';
-import type { ClaimedMail } from './outbox';
+import { mailContent } from './mail-content';
 import { mailSender } from './send';
 
 const IDLE_MS = 500;
@@ -20,14 +18,6 @@ const UNAVAILABLE_MS = 5_000;
 
 const ending = new AbortController();
 for (const name of ['SIGINT', 'SIGTERM'] as const) process.once(name, () => ending.abort());
-
-async function renderClaimed(mail: ClaimedMail): Promise<RenderedMail> {
-  const person = mail.personId === null ? null : await models().Person.findByPk(mail.personId);
-  return renderMail(mail.kind, JSON.parse(mail.payload), {
-    url: environment().url,
-    recipientName: person?.printedName ?? null,
-  });
-}
 
 /** Where mails go: the configured server, else the catcher of a demo or a test; null where they are held. */
 async function mailServer(): Promise<{ smtpUrl: string; catcher: MailCatcher | null } | null> {
@@ -50,8 +40,7 @@ async function main(): Promise<void> {
     const delivery: MailDelivery = {
       owner: `${hostname().slice(0, 40)}:${randomUUID()}`,
       send: mailSender(server.smtpUrl, environment().mailFrom),
-      render: renderClaimed,
-      stillHolds: (mail) => causeStillHolds({ ...mail, payload: JSON.parse(mail.payload) }),
+      ...mailContent,
     };
     const step = async (): Promise<number> => {
       const result = await deliverNextMail(delivery);

@@ -65,6 +65,9 @@ async function readClaim(id: string, owner: string): Promise<ClaimedMail | null>
   return rows[0] ?? null;
 }
 
+/** A mail that has come to its end keeps no link's token: who reads the table later could not use it. */
+const WITHOUT_TOKEN = `payload = IF(JSON_EXISTS(payload, '$.token'), JSON_REMOVE(payload, '$.token'), payload)`;
+
 /** Writes a change to a claimed mail, when the claim is still this worker's; says whether it was. */
 async function writeBack(
   mail: ClaimedMail,
@@ -88,12 +91,16 @@ async function writeBack(
 
 /** Marks a mail as handed over to the mail server. False when another worker has claimed it since. */
 export function markSent(mail: ClaimedMail): Promise<boolean> {
-  return writeBack(mail, `state = 'sent', sent_at = UTC_TIMESTAMP(3), last_error = NULL`, {});
+  return writeBack(
+    mail,
+    `state = 'sent', sent_at = UTC_TIMESTAMP(3), last_error = NULL, ${WITHOUT_TOKEN}`,
+    {},
+  );
 }
 
 /** Marks a mail whose cause no longer holds: it is not sent. */
 export function markOvertaken(mail: ClaimedMail): Promise<boolean> {
-  return writeBack(mail, `state = 'overtaken', last_error = NULL`, {});
+  return writeBack(mail, `state = 'overtaken', last_error = NULL, ${WITHOUT_TOKEN}`, {});
 }
 
 /**
@@ -107,7 +114,8 @@ export function markFailed(mail: ClaimedMail, reason: string, isRefusal: boolean
   const seconds = Math.min(LONGEST_PAUSE_SECONDS, FIRST_PAUSE_SECONDS * 2 ** Math.min(mail.attempts - 1, 10));
   return writeBack(
     mail,
-    `state = :state, last_error = :reason, next_attempt_at = UTC_TIMESTAMP(6) + INTERVAL :seconds SECOND`,
+    `state = :state, last_error = :reason, next_attempt_at = UTC_TIMESTAMP(6) + INTERVAL :seconds SECOND
+     ${state === 'dead' ? `, ${WITHOUT_TOKEN}` : ''}`,
     { state, reason: reason.slice(0, 500), seconds },
   );
 }

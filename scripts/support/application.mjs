@@ -4,6 +4,8 @@ import { read, pause } from './processes.mjs';
 import { spawnPart } from './parts.mjs';
 
 const LONGEST_START_MS = 60_000;
+/** What the production server says of itself at each start; the start script says it in its own words. */
+const GREETING = /^\s*$|^\s*(▲ Next\.js|- (Local|Network):|✓ (Ready|Starting|Running next\.config))/;
 
 /** Waits until the web server takes connections, or says that it ended first. */
 async function untilItAnswers(child, port) {
@@ -42,6 +44,7 @@ export async function startWeb(root, env, { isDevelopment = false } = {}) {
       cwd: root,
       env: { ...env, NODE_ENV: isDevelopment ? 'development' : 'production', NEXT_TELEMETRY_DISABLED: '1' },
       prefix: 'web',
+      ...(isDevelopment ? {} : { unsaid: GREETING }),
     },
   );
   await untilItAnswers(child, Number(env.PORT));

@@ -8,8 +8,13 @@ const LONGEST_PAUSE_MS = 10_000;
 /** A part that ran this long was well: the next end is not counted with the earlier ones. */
 const WELL_AFTER_MS = 30_000;
 
-/** Starts a process of a part in a group of its own, so that a Ctrl-C reaches only the one who stops them in order. */
-export function spawnPart(command, args, { cwd, env, prefix }) {
+/**
+ * Starts a process of a part in a group of its own, so that a Ctrl-C reaches only the one who stops them in order.
+ * What it prints is shown line by line.
+ * @param options.prefix stands before each line
+ * @param options.unsaid lines that are not shown
+ */
+export function spawnPart(command, args, { cwd, env, prefix, unsaid = /^\s*$/ }) {
   const child = spawn(command, args, { cwd, env, detached: true, stdio: ['ignore', 'pipe', 'pipe', 'ipc'] });
   for (const [stream, target] of [
     [child.stdout, process.stdout],
@@ -19,7 +24,7 @@ export function spawnPart(command, args, { cwd, env, prefix }) {
     stream.setEncoding('utf8').on('data', (text) => {
       const lines = (rest + text).split('\n');
       rest = lines.pop() ?? '';
-      for (const line of lines) if (line.trim() !== '') target.write(`${prefix} | ${line}\n`);
+      for (const line of lines) if (!unsaid.test(line)) target.write(`${prefix} | ${line}\n`);
     });
   }
   return child;

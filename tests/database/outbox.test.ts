@@ -19,8 +19,15 @@ async function queue(
   await database.asOwner((owner) =>
     owner.query(
       `INSERT INTO outbox (id, kind, cause, address, payload, priority, state, message_id, created_at)
-       VALUES (?, 'notice', ?, 'reader@example.org', '{}', ?, 'queued', ?, UTC_TIMESTAMP(3) - INTERVAL ? MINUTE)`,
-      [id, fields.cause ?? id, fields.priority ?? 5, `<${id}@stepwell.invalid>`, fields.minutesAgo ?? 0],
+       VALUES (?, 'notice', ?, 'reader@example.org', ?, ?, 'queued', ?, UTC_TIMESTAMP(3) - INTERVAL ? MINUTE)`,
+      [
+        id,
+        fields.cause ?? id,
+        JSON.stringify(fields.payload ?? {}),
+        fields.priority ?? 5,
+        `<${id}@stepwell.invalid>`,
+        fields.minutesAgo ?? 0,
+      ],
     ),
   );
   return id;
@@ -143,6 +150,29 @@ describe('delivery', () => {
     }
     expect((await row(id)).state).toBe('dead');
     expect(await deliverNextMail(refusing)).toBe('idle');
+  });
+
+  it('wipes the token of a link once the mail was sent, overtaken or given up, and not before', async () => {
+    const payload = { kind: 'invitation', token: 'a-secret', purpose: 'invitation' };
+    const without = JSON.stringify({ kind: 'invitation', purpose: 'invitation' });
+    const kept = async (id: string): Promise<unknown> => JSON.parse((await row(id)).payload);
+
+    const sentMail = await queue({ payload });
+    await drain(delivery('w', []));
+    expect(await kept(sentMail)).toEqual(JSON.parse(without));
+
+    const overtaken = await queue({ payload });
+    await drain(delivery('w', [], { stillHolds: () => Promise.resolve(false) }));
+    expect(await kept(overtaken)).toEqual(JSON.parse(without));
+
+    const refused = await queue({ payload });
+    const refusing = delivery('w', [], { send: () => Promise.reject(new Error('550 no such mailbox')) });
+    for (let attempt = 1; attempt <= MOST_REFUSALS; attempt += 1) {
+      expect(await kept(refused)).toEqual(payload);
+      await deliverNextMail(refusing);
+      await endPause();
+    }
+    expect(await kept(refused)).toEqual(JSON.parse(without));
   });
 
   it('cuts an error text to what the column takes', async () => {
