@@ -43,3 +43,13 @@ export async function readerTrial(reader: TrialReader, code: string): Promise<Re
     may: (permission) => roleMay(role, permission),
   };
 }
+
+/** True when the trial of an address is the reader's and their role carries the permission. */
+export async function mayInTrialByCode(
+  reader: TrialReader,
+  code: string,
+  permission: TrialPermission,
+): Promise<boolean> {
+  const trial = await readerTrial(reader, code);
+  return trial !== null && trial.may(permission);
+}

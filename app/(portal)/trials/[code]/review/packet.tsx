@@ -1,7 +1,8 @@
 import { PageTitle } from '@/components/layout/page-title';
-import { Section } from '@/components/layout/section';
+import { Section, TwoColumns } from '@/components/layout/section';
 import { DecisionForm } from '@/components/review/decision-form';
 import { offeredDecisions } from '@/components/review/offered-decisions';
+import { NextSteps } from '@/components/review/next-steps';
 import { packetLede, packetQuestion } from '@/components/review/packet-words';
 import { StaticTable } from '@/components/tables/static-table';
 import { TraceTable } from '@/components/trace/trace-table';
@@ -83,11 +84,14 @@ export function Packet({
         </Section>
       ) : null}
       <Section title={isStop ? 'How the stop was reached' : `How ${doseText(design, dose)} was reached`}>
-        <TraceTable
-          lines={packet.lines}
-          context={printContext(design)}
-          caption={isStop ? 'How the stop was reached' : `How ${doseText(design, dose)} was reached`}
-        />
+        <TwoColumns>
+          <TraceTable
+            lines={packet.lines}
+            context={printContext(design)}
+            caption={isStop ? 'How the stop was reached' : `How ${doseText(design, dose)} was reached`}
+          />
+          {isStop ? null : <NextSteps design={design} history={packet.history} dose={dose} number={number} />}
+        </TwoColumns>
       </Section>
       <Section title="Your decision" raised id="decision">
         {packet.sign === null ? (
