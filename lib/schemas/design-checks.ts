@@ -19,6 +19,16 @@ export function checkDesign(design: Design, context: z.core.$RefinementCtx<Desig
       `A rise needs ${design.evaluableForRise} evaluable subjects, more than the cohort's ${design.cohortSize}, so no cohort could rise. Enter at most ${design.cohortSize}.`,
     );
   }
+  if (
+    design.guardrails.largestRise === null &&
+    design.response.kind === 'harm' &&
+    design.doses.kind === 'range'
+  ) {
+    refuse(
+      ['guardrails', 'largestRise'],
+      'For a harm on a range of doses the largest rise from one cohort to the next must be bounded. Enter a fold such as 2, or a step on the working scale.',
+    );
+  }
   const values = doseValues(design, refuse);
   if (values !== null) checkGuardrails(design, values, refuse);
 }
@@ -204,15 +214,7 @@ function checkGuardrails(design: Design, doses: DoseValues, refuse: Refuse): voi
 
 function checkLargestRise(design: Design, doses: DoseValues, refuse: Refuse): void {
   const { largestRise } = design.guardrails;
-  if (largestRise === null) {
-    if (design.response.kind === 'harm' && design.doses.kind === 'range') {
-      refuse(
-        ['guardrails', 'largestRise'],
-        'For a harm on a range of doses the largest rise from one cohort to the next must be bounded. Enter a fold such as 2, or a step on the working scale.',
-      );
-    }
-    return;
-  }
+  if (largestRise === null) return;
   if (largestRise.kind === 'fold' && doses.lowest <= 0) {
     refuse(
       ['guardrails', 'largestRise'],
