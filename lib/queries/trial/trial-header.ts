@@ -1,6 +1,7 @@
 import { standingHalt, submittedVersion, draftVersion, versionInForce } from '@/lib/conduct/trial-facts';
 import type { TrialLife } from '@/lib/conduct/state';
 import { ROLE_NAMES } from '@/lib/policy/roles';
+import type { Design } from '@/lib/schemas/design';
 import { unitText } from '@/lib/schemas/units';
 import { courseOfDoses, type CourseView } from './course-of-doses';
 import { readerTrial, type TrialReader } from './reader-trial';
@@ -54,7 +55,7 @@ function summaryOf({
   design,
   number,
 }: {
-  design: import('@/lib/schemas/design').Design;
+  design: Design;
   number: number;
 }): string {
   const unit = unitText(design.unit);
