@@ -1,7 +1,5 @@
 'use client';
 
-import { PageTitle } from '@/components/layout/page-title';
-import { Sheet } from '@/components/layout/sheet';
 import { Button } from '@/components/ui/button';
 
 /** The reference under which the server logged the error, when it did. */
@@ -15,18 +13,20 @@ function referenceOf(error: unknown): string | undefined {
 export default function ErrorPage({ error, retry }: { error: unknown; retry: () => void }) {
   const reference = referenceOf(error);
   return (
-    <Sheet>
-      <PageTitle lede="The page could not be shown. Nothing you recorded before is lost. Try again; if it happens again, tell the administrator.">
-        Something went wrong
-      </PageTitle>
+    <main id="work" className="mx-auto max-w-sheet px-4 pt-4.5 md:px-8 md:pt-7">
+      <h1 className="text-2xl">Something went wrong</h1>
+      <p className="mt-1.5 max-w-prose text-ink-soft">
+        The page could not be shown. Nothing you recorded before is lost. Try again; if it happens again, tell
+        the administrator.
+      </p>
       {reference ? (
-        <p>
+        <p className="mt-4">
           Reference <code>{reference}</code>
         </p>
       ) : null}
       <p className="mt-4">
         <Button onClick={() => retry()}>Try again</Button>
       </p>
-    </Sheet>
+    </main>
   );
 }

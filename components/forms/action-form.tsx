@@ -27,7 +27,7 @@ export function ActionForm<Values extends FieldValues, Value>({
   saved?: ReactNode | ((value: Value) => ReactNode);
   className?: string;
 }) {
-  const { form, parts, outcome, submit } = state;
+  const { form, parts, outcome, submit, prepare } = state;
   return (
     <FormProvider {...form}>
       <ActionFormContext value={parts}>
@@ -37,6 +37,7 @@ export function ActionForm<Values extends FieldValues, Value>({
           aria-label={label}
           aria-labelledby={labelledBy}
           onSubmit={submit}
+          onFocus={prepare}
           className="@container"
         >
           <ErrorSummary outcome={outcome} />

@@ -1,6 +1,5 @@
 'use client';
 
-import { zodResolver } from '@hookform/resolvers/zod';
 import { unstable_rethrow } from 'next/navigation';
 import { useCallback, useId, useMemo, useRef, useState, useTransition, useSyncExternalStore } from 'react';
 import {
@@ -11,13 +10,13 @@ import {
   type FieldPath,
   type FieldValues,
   type Mode,
-  type Resolver,
   type UseFormReturn,
 } from 'react-hook-form';
 import type { z } from 'zod';
 import type { ActionRefusal, ActionResult, Submission } from '@/lib/schemas/action-result';
 import type { FieldFacts, FormContextValue } from './form-context';
-import { problemsOf, unreadableValues, valuesToSend, type FieldProblem } from './form-values';
+import { makeResolver, type SchemaSource } from './form-resolver';
+import { problemsOf, valuesToSend, type FieldProblem } from './form-values';
 
 /** How the last attempt to send ended. `lost`: no answer came, so nobody knows whether it was recorded. */
 export type FormOutcome<Value> =
@@ -35,14 +34,20 @@ export interface ActionFormState<Values extends FieldValues = FieldValues, Value
   pending: boolean;
   /** Checks, sends, and shows the answer. A second call while one is under way does nothing. */
   submit: (event?: { preventDefault: () => void }) => void;
+  /** Fetches the schema ahead of its first use; called when the form is first focused. */
+  prepare: () => void;
 }
 
-/** What a form over a server action is made of. */
+/** A server action a form can send to: the values as typed and a submission key, for a value or a refusal. */
+export type FormAction<Schema extends z.ZodType<unknown, FieldValues>, Value> = (
+  input: z.input<Schema> & Submission,
+) => Promise<ActionResult<Value>>;
+
+/** What a form over a server action is made of. The schema is the one of the first render. */
 export interface ActionFormOptions<Schema extends z.ZodType<unknown, FieldValues>, Value> {
-  /** The schema the action parses its input with; what it refuses here is not sent. */
-  schema: Schema;
-  /** The server action: takes the values as typed and a submission key. */
-  action: (input: z.input<Schema> & Submission) => Promise<ActionResult<Value>>;
+  /** The schema the action parses its input with, or how to fetch it; what it refuses here is not sent. */
+  schema: SchemaSource<Schema>;
+  action: FormAction<Schema, Value>;
   defaultValues: DefaultValues<z.input<Schema>>;
   /** Called once with what the action gave back: close a panel, go to another page. */
   onSaved?: (value: Value) => void;
@@ -74,42 +79,33 @@ export function useActionForm<Schema extends z.ZodType<unknown, FieldValues>, Va
     () => true,
     () => false,
   );
-  const fields = useRef(new Map<string, FieldFacts>());
+  const [fields] = useState(() => new Map<string, FieldFacts>());
   const submissionKey = useRef<string | null>(null);
   const underWay = useRef(false);
   const [pending, startTransition] = useTransition();
   const [outcome, setOutcome] = useState<FormOutcome<Value>>({ kind: 'none' });
 
-  const resolver = useMemo(() => {
-    const bySchema = zodResolver(schema, undefined, { raw: true }) as unknown as Resolver<Values>;
-    const resolve: Resolver<Values> = async (values, context, options) => {
-      const result = await bySchema(valuesToSend(values, fields.current), context, options);
-      const sentences = unreadableValues(values, fields.current);
-      if (sentences.size === 0) return result;
-      const errors = { ...result.errors };
-      for (const [name, message] of sentences) set(errors, name, { type: 'unreadable', message });
-      return { values: {}, errors: errors as FieldErrors<Values> };
-    };
-    return resolve;
-  }, [schema]);
-
+  const [{ resolve, prepare }] = useState(() => makeResolver(schema, () => fields));
   const form = useForm<Values>({
-    resolver,
+    resolver: resolve,
     defaultValues,
     mode: checkWhile,
     reValidateMode: 'onChange',
     shouldFocusError: false,
   });
 
-  const register = useCallback((name: string, facts: FieldFacts) => {
-    fields.current.set(name, facts);
-    return () => {
-      fields.current.delete(name);
-    };
-  }, []);
+  const register = useCallback(
+    (name: string, facts: FieldFacts) => {
+      fields.set(name, facts);
+      return () => {
+        fields.delete(name);
+      };
+    },
+    [fields],
+  );
 
   function emptySecrets() {
-    for (const [name, { secret }] of fields.current) {
+    for (const [name, { secret }] of fields) {
       if (secret) form.resetField(name as FieldPath<Values>, { keepError: true, defaultValue: '' as never });
     }
   }
@@ -120,13 +116,13 @@ export function useActionForm<Schema extends z.ZodType<unknown, FieldValues>, Va
     }
     const errors: Record<string, unknown> = {};
     for (const [name, message] of Object.entries(refusal.fields ?? {})) set(errors, name, { message });
-    setOutcome({ kind: 'refused', refusal, problems: problemsOf(errors as FieldErrors, fields.current) });
+    setOutcome({ kind: 'refused', refusal, problems: problemsOf(errors as FieldErrors, fields) });
   }
 
   async function send() {
     submissionKey.current ??= crypto.randomUUID();
     const input = {
-      ...valuesToSend(form.getValues(), fields.current),
+      ...valuesToSend(form.getValues(), fields),
       submissionKey: submissionKey.current,
     };
     let result: ActionResult<Value>;
@@ -159,7 +155,7 @@ export function useActionForm<Schema extends z.ZodType<unknown, FieldValues>, Va
       () => startTransition(send),
       (errors) => {
         underWay.current = false;
-        setOutcome({ kind: 'invalid', problems: problemsOf(errors, fields.current) });
+        setOutcome({ kind: 'invalid', problems: problemsOf(errors, fields) });
       },
     );
     attempt().catch((error: unknown) => {
@@ -169,5 +165,5 @@ export function useActionForm<Schema extends z.ZodType<unknown, FieldValues>, Va
   }
 
   const parts = useMemo(() => ({ id, pending, ready, register }), [id, pending, ready, register]);
-  return { form, parts, outcome, pending, submit };
+  return { form, parts, outcome, pending, submit, prepare };
 }

@@ -1,4 +1,3 @@
-import Link from 'next/link';
 import { useId, type ComponentProps, type ReactNode } from 'react';
 
 /** primary: the one act of a page · secondary: any other act · danger: halt, stop · quiet: a small act within a line */
@@ -65,14 +64,4 @@ export function Button({
       </span>
     </span>
   );
-}
-
-/** A link that looks like a button: the act begins on another page. */
-export function ButtonLink({
-  variant = 'secondary',
-  small = false,
-  className = '',
-  ...rest
-}: ComponentProps<typeof Link> & { variant?: ButtonVariant; small?: boolean }) {
-  return <Link prefetch={false} {...rest} className={`${buttonClass(variant, small)} ${className}`} />;
 }

@@ -37,7 +37,7 @@ export function SkeletonTable({ rows = 5, columns = 4 }: { rows?: number; column
 /** A drawing or chart that is on its way. */
 export function SkeletonFigure() {
   return (
-    <div role="status" className="aspect-[9/4] w-full animate-pulse rounded-sm bg-line/40">
+    <div role="status" className="h-full min-h-40 w-full animate-pulse rounded-sm bg-line/40">
       <span className="sr-only">Loading</span>
     </div>
   );
