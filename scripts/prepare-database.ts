@@ -10,6 +10,7 @@ import { closeDatabase, models } from '@/lib/db/connection';
 import { connectorOptions, migrate, pendingMigrations, type InstallationKind } from '@/lib/db/migrate';
 import { quoteName } from '@/lib/db/grants';
 import { inTransaction } from '@/lib/db/transaction';
+import { isLostConnection } from '@/lib/db/transient-errors';
 import { environment } from '@/lib/env';
 import { loadDemo } from './demo/load';
 
@@ -113,11 +114,18 @@ async function demoAccounts(): Promise<Prepared['accounts']> {
   }));
 }
 
+function inWords(error: unknown): string {
+  const text = error instanceof Error ? error.message : String(error);
+  if (!isLostConnection(error)) return text;
+  const { host, pathname } = new URL(environment().databaseUrl);
+  return `The database ${pathname.slice(1)} at ${host} does not answer: ${text}`;
+}
+
 try {
   const prepared = await main();
   console.log(JSON.stringify(prepared));
 } catch (error) {
-  console.error(error instanceof Error ? error.message : error);
+  console.error(inWords(error));
   process.exitCode = 1;
 } finally {
   await closeDatabase();

@@ -50,7 +50,7 @@ function chosenPort() {
 async function refuseTakenPort(port) {
   const trouble = await portTrouble(port, process.env.STEPWELL_HOST || undefined);
   if (trouble === null) return;
-  const other = `Choose another: PORT=${port === 3001 ? 3002 : 3001} npm start`;
+  const other = `Choose another: PORT=${port < 65535 ? port + 1 : 3000} npm start`;
   if (trouble === 'EADDRINUSE') throw new StartRefused(`Port ${port} is in use by another program. ${other}`);
   if (trouble === 'EACCES') throw new StartRefused(`This user may not listen on port ${port}. ${other}`);
   throw new StartRefused(`Port ${port} cannot be listened on (${trouble}). ${other}`);
@@ -170,8 +170,10 @@ async function start() {
   if (!isDevelopment) await ensureBuild(root, { say, children, log: path.join(logFolder, 'build.log') });
   const startOfWorker = () => startWorker(root, env);
   const startOfWeb = () => startWeb(root, env, { isDevelopment });
-  await keepRunning(new Part('worker', startOfWorker, { runFolder, say }));
-  await keepRunning(new Part('web server', startOfWeb, { runFolder, say, graceMs: 5_000 }));
+  await Promise.all([
+    keepRunning(new Part('worker', startOfWorker, { runFolder, say })),
+    keepRunning(new Part('web server', startOfWeb, { runFolder, say, graceMs: 5_000 })),
+  ]);
   sayWhereThingsAre(address, prepared, Boolean(given.SMTP_URL));
 }
 

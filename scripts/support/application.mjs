@@ -70,18 +70,20 @@ export async function startWorker(root, env) {
 /**
  * Migrates a database, marks and fills a new one (scripts/prepare-database.ts).
  * @returns what that script printed as its last line, parsed
+ * @throws Error when it failed; why stands on standard error then
  */
 export async function prepareDatabase(root, env, { kind, isPrivate, children }) {
-  const printed = await read(
-    process.execPath,
-    [
-      '--import',
-      'tsx',
-      path.join(root, 'scripts/prepare-database.ts'),
-      kind,
-      isPrivate ? 'private' : 'given',
-    ],
-    { cwd: root, env: { ...env, NODE_ENV: 'production' }, children },
-  );
+  const script = path.join(root, 'scripts/prepare-database.ts');
+  let printed;
+  try {
+    printed = await read(
+      process.execPath,
+      ['--import', 'tsx', script, kind, isPrivate ? 'private' : 'given'],
+      { cwd: root, env: { ...env, NODE_ENV: 'production' }, children },
+    );
+  } catch (error) {
+    // The script has said why on standard error.
+    throw new Error('The database could not be made ready (see above).', { cause: error });
+  }
   return JSON.parse(printed.trim().split('\n').at(-1));
 }
