@@ -5,7 +5,6 @@ import { useFormContext, useWatch } from 'react-hook-form';
 import { RadioGroup } from '@/components/forms/choice-fields';
 import { DateTimeField } from '@/components/forms/date-time-field';
 import { formatTime } from '../ui/format-time';
-import { OutcomeMark } from '../ui/outcome-mark';
 import type { CohortWork, SubjectData } from './cohort-data';
 
 /** Why "absent" cannot be recorded yet, with the time from which it can; undefined when it can. */
@@ -38,13 +37,10 @@ export function OutcomeFields({
         name="outcome"
         label={label}
         choices={[
-          {
-            value: 'present',
-            label: <OutcomeMark outcome="present" word={labels.present} />,
-          },
+          { value: 'present', label: labels.present },
           {
             value: 'absent',
-            label: <OutcomeMark outcome="absent" word={labels.absent} />,
+            label: labels.absent,
             disabledReason: whyNotAbsent(subject, work),
           },
         ]}

@@ -34,14 +34,14 @@ function Place({
   children?: ReactNode;
 }) {
   return (
-    <li className="border-t border-line py-4">
-      <div className="mb-1.5 flex flex-wrap items-baseline gap-x-3 gap-y-1">
+    <li className={`border-t border-line ${children ? 'py-4' : 'py-2.5'}`}>
+      <div className="flex flex-wrap items-baseline gap-x-3 gap-y-1">
         <span className="text-xs text-ink-soft">Place {number}</span>
         {heading}
         {aside ? <span className="ml-auto">{aside}</span> : null}
       </div>
       <SavedNotice spot={spotOf(number)} />
-      {children}
+      {children ? <div className="mt-1.5">{children}</div> : null}
     </li>
   );
 }

@@ -38,6 +38,7 @@ export function SubjectTable({
         dose: subject.doseGiven,
       },
       content: {
+        code: <span className="font-mono text-[0.88em] whitespace-nowrap">{subject.code}</span>,
         dosed: subject.dosedAt ? <TimeInZone at={subject.dosedAt} zone={zone} /> : 'not yet',
         window: subject.windowEndsAt ? <TimeInZone at={subject.windowEndsAt} zone={zone} /> : undefined,
         outcome: (

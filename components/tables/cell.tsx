@@ -49,7 +49,7 @@ export function headerClass(column: Column): string {
 /** A cell's class; stacked tables show it on a phone with its header before it. */
 export function cellClass(column: Column, stacked: boolean): string {
   const phone = stacked
-    ? 'max-md:border-0 max-md:px-0 max-md:py-0.5 max-md:text-left max-md:before:mr-1 max-md:before:text-xs max-md:before:text-ink-soft max-md:before:content-[attr(data-header)]'
+    ? 'max-md:border-0 max-md:px-0 max-md:py-0.5 max-md:text-left max-md:data-header:before:mr-1 max-md:data-header:before:text-xs max-md:data-header:before:text-ink-soft max-md:data-header:before:content-[attr(data-header)]'
     : '';
   return `border-b border-line py-1.75 align-top font-normal last:pr-0 ${sideClass(column)} ${
     column.strong ? 'font-semibold' : ''

@@ -108,7 +108,11 @@ export const trialInputSchemas = {
     plan: z.enum(['continue', 'close-short'], { error: 'Say what becomes of the open cohort.' }),
     reason: reasonSchema,
   }),
-  'reserve-slot': z.strictObject({ cohortId: idSchema, siteId: idSchema, code: subjectCodeSchema }),
+  'reserve-slot': z.strictObject({
+    cohortId: idSchema,
+    siteId: chosenIdSchema('Choose the site.'),
+    code: subjectCodeSchema,
+  }),
   'release-slot': z.strictObject({ subjectId: idSchema, reason: shortReasonSchema }),
   'record-dosing': z.strictObject({
     subjectId: idSchema,

@@ -81,6 +81,8 @@ export async function cohortList(reader: TrialReader, code: string): Promise<Coh
         ? beforeTheFirst(state)
         : standingHalt(state) && last.state === 'open'
           ? `The trial is halted. Outcomes and corrections of cohort ${last.number} go on.`
-          : whatFollows(state, last),
+          : last.state === 'open' && !last.isRecordsOnly
+            ? `Cohort ${last.number} is open. ${whatFollows(state, last)}`
+            : whatFollows(state, last),
   };
 }

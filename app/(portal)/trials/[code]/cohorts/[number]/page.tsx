@@ -143,10 +143,11 @@ export default async function CohortPage({ params }: Props) {
       <QueryProvider>
         <ChangeWatch trialCode={view.trialCode} cohortNumber={cohort.number} revision={view.revision} />
       </QueryProvider>
-      <p className="mb-1.5">
-        <StateChip {...cohort.standing} />
-      </p>
-      <PageTitle lede={view.follows}>Cohort {cohort.number}</PageTitle>
+      <PageTitle lede={view.follows}>
+        <span className="flex flex-wrap items-center gap-x-3.5 gap-y-1">
+          Cohort {cohort.number} <StateChip {...cohort.standing} />
+        </span>
+      </PageTitle>
       <ReleasedDose
         dose={dose}
         zone={zone}
