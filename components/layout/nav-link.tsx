@@ -1,7 +1,7 @@
 'use client';
 
-import Link from 'next/link';
 import { usePathname } from 'next/navigation';
+import { PageLink } from '../ui/page-link';
 
 /** A place to go: its address and the word for it. */
 export interface NavItem {
@@ -21,15 +21,15 @@ export function isCurrent(item: NavItem, pathname: string): boolean {
 export function NavLink({ item, className = '' }: { item: NavItem; className?: string }) {
   const current = isCurrent(item, usePathname() ?? '');
   return (
-    <Link
+    <PageLink
       href={item.href}
-      prefetch={false}
+
       aria-current={current ? 'page' : undefined}
       className={`inline-block border-b-2 whitespace-nowrap ${
         current ? 'border-water font-semibold text-ink' : 'border-transparent text-ink-soft hover:text-ink'
       } ${className}`}
     >
       {item.label}
-    </Link>
+    </PageLink>
   );
 }

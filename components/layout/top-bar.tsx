@@ -1,8 +1,8 @@
-import Link from 'next/link';
 import type { ReactNode } from 'react';
 import { Brand } from './brand';
 import { NavLink, type NavItem } from './nav-link';
 import { PhoneMenu } from './phone-menu';
+import { PageLink } from '../ui/page-link';
 
 /**
  * The bar at the top of every page: the mark, where one can go, who one is.
@@ -22,9 +22,9 @@ export function TopBar({
   const who = person ? (
     <span className="leading-tight">
       {person.href ? (
-        <Link href={person.href} prefetch={false} className="hover:text-ink hover:underline">
+        <PageLink href={person.href} className="hover:text-ink hover:underline">
           {person.name}
-        </Link>
+        </PageLink>
       ) : (
         person.name
       )}
@@ -33,9 +33,9 @@ export function TopBar({
   ) : null;
   return (
     <header className="relative flex items-center gap-3.5 border-b border-line px-4 py-2 md:gap-7 md:px-8 md:py-3 print:border-0 print:px-0">
-      <Link href="/" prefetch={false} aria-label="Stepwell, to Today" className="rounded-sm">
+      <PageLink href="/" aria-label="Stepwell, to Today" className="rounded-sm">
         <Brand />
-      </Link>
+      </PageLink>
       {nav.length > 0 ? (
         <nav aria-label="Main" className="hidden gap-5.5 md:flex print:hidden">
           {nav.map((item) => (

@@ -1,6 +1,6 @@
-import Link from 'next/link';
 import type { ComponentProps } from 'react';
 import { buttonClass, type ButtonVariant } from './button';
+import { PageLink } from './page-link';
 
 /** A link that looks like a button: the act begins on another page. */
 export function ButtonLink({
@@ -8,6 +8,6 @@ export function ButtonLink({
   small = false,
   className = '',
   ...rest
-}: ComponentProps<typeof Link> & { variant?: ButtonVariant; small?: boolean }) {
-  return <Link prefetch={false} {...rest} className={`${buttonClass(variant, small)} ${className}`} />;
+}: ComponentProps<typeof PageLink> & { variant?: ButtonVariant; small?: boolean }) {
+  return <PageLink {...rest} className={`${buttonClass(variant, small)} ${className}`} />;
 }

@@ -1,11 +1,19 @@
 'use client';
 
-import { useRef, type ReactNode } from 'react';
+import { Suspense, useEffect, useRef, useState, type ReactNode } from 'react';
 import { buttonClass } from './button';
+import { SkeletonText } from './skeleton';
+
+/** Puts the focus on the first field as soon as it is there. */
+function FocusFirst({ children }: { children: ReactNode }) {
+  const box = useRef<HTMLDivElement>(null);
+  useEffect(() => box.current?.querySelector<HTMLElement>('textarea, input:not([type=hidden])')?.focus(), []);
+  return <div ref={box}>{children}</div>;
+}
 
 /**
- * Halting in two clicks: the first opens the reason in place, the second (in the form given) halts.
- * It opens before the page's scripts have run; Escape closes it.
+ * Halting in two clicks: the first opens the reason in place, the second (in the form given) halts. Escape closes it.
+ * The form is only rendered once it is open, so that it may be a component loaded at that moment.
  * @param label the act, such as "Halt the trial"
  * @param consequence what a halt does and who can lift it
  * @param children the form with the reason and its button
@@ -20,12 +28,15 @@ export function DisclosureHalt({
   children: ReactNode;
 }) {
   const box = useRef<HTMLDetailsElement>(null);
+  const [opened, setOpened] = useState(false);
   return (
     <details
       ref={box}
       className="group"
       onToggle={() => {
-        if (box.current?.open) box.current.querySelector<HTMLElement>('textarea, input')?.focus();
+        if (!box.current?.open) return;
+        setOpened(true);
+        box.current.querySelector<HTMLElement>('textarea, input:not([type=hidden])')?.focus();
       }}
       onKeyDown={(event) => {
         if (event.key !== 'Escape' || !box.current) return;
@@ -40,7 +51,11 @@ export function DisclosureHalt({
       </summary>
       <div className="mt-3 max-w-prose border-l-4 border-brick bg-paper px-3.5 py-3">
         {consequence ? <p className="mb-3 text-sm">{consequence}</p> : null}
-        {children}
+        {opened ? (
+          <Suspense fallback={<SkeletonText lines={2} />}>
+            <FocusFirst>{children}</FocusFirst>
+          </Suspense>
+        ) : null}
       </div>
     </details>
   );
