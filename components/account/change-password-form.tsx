@@ -4,9 +4,8 @@ import { ActionForm } from '@/components/forms/action-form';
 import { PasswordField } from '@/components/forms/password-field';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { useActionForm } from '@/components/forms/use-action-form';
-import { changePasswordSchema } from '@/lib/schemas/account';
 import type { ActionResult } from '@/lib/schemas/action-result';
-import { SHORTEST_PASSWORD } from '@/lib/schemas/password';
+import { SHORTEST_PASSWORD } from '@/lib/schemas/password-length';
 
 /** Changes one's own password; the present one is asked for. */
 export function ChangePasswordForm({
@@ -19,7 +18,7 @@ export function ChangePasswordForm({
   }) => Promise<ActionResult>;
 }) {
   const state = useActionForm({
-    schema: changePasswordSchema,
+    schema: () => import('@/lib/schemas/account').then((module) => module.changePasswordSchema),
     action,
     defaultValues: { currentPassword: '', newPassword: '' },
     clearWhenSaved: true,

@@ -4,7 +4,6 @@ import { useRouter } from 'next/navigation';
 import { ActionForm } from '@/components/forms/action-form';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { useActionForm } from '@/components/forms/use-action-form';
-import { endSessionSchema } from '@/lib/schemas/account';
 import type { ActionResult } from '@/lib/schemas/action-result';
 
 /** Ends another session of one's own. */
@@ -20,7 +19,7 @@ export function EndSessionForm({
 }) {
   const router = useRouter();
   const state = useActionForm({
-    schema: endSessionSchema,
+    schema: () => import('@/lib/schemas/account').then((module) => module.endSessionSchema),
     action,
     defaultValues: { sessionId },
     onSaved: () => router.refresh(),

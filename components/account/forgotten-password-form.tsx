@@ -5,7 +5,6 @@ import { SubmitButton } from '@/components/forms/submit-button';
 import { TextField } from '@/components/forms/text-field';
 import { useActionForm } from '@/components/forms/use-action-form';
 import type { ActionResult } from '@/lib/schemas/action-result';
-import { installationInputSchemas } from '@/lib/schemas/installation-inputs';
 
 /** Asks for a link by mail. What it answers is the same for every address. */
 export function ForgottenPasswordForm({
@@ -14,7 +13,10 @@ export function ForgottenPasswordForm({
   action: (input: { email: string; submissionKey: string }) => Promise<ActionResult>;
 }) {
   const state = useActionForm({
-    schema: installationInputSchemas['request-password-reset'],
+    schema: () =>
+      import('@/lib/schemas/installation-inputs').then(
+        ({ installationInputSchemas }) => installationInputSchemas['request-password-reset'],
+      ),
     action,
     defaultValues: { email: '' },
   });

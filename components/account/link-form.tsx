@@ -7,7 +7,7 @@ import { SubmitButton } from '@/components/forms/submit-button';
 import { TextField } from '@/components/forms/text-field';
 import { useActionForm } from '@/components/forms/use-action-form';
 import type { ActionResult } from '@/lib/schemas/action-result';
-import { setPasswordSchema, SHORTEST_PASSWORD } from '@/lib/schemas/accept-link';
+import { SHORTEST_PASSWORD } from '@/lib/schemas/password-length';
 
 type Input = { token: string; email?: string; printedName?: string; password: string; submissionKey: string };
 
@@ -37,7 +37,8 @@ export function LinkForm({
   const isFirst = purpose === 'first-administrator';
   const asksName = purpose !== 'password-reset';
   const state = useActionForm({
-    schema: setPasswordSchema[purpose],
+    schema: () =>
+      import('@/lib/schemas/accept-link').then(({ setPasswordSchema }) => setPasswordSchema[purpose]),
     action: (input) => action({ ...input, token }),
     defaultValues: {
       ...(isFirst ? { email: '' } : {}),

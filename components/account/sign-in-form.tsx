@@ -10,7 +10,6 @@ import { useActionForm } from '@/components/forms/use-action-form';
 import { Section, TwoColumns } from '@/components/layout/section';
 import { Button } from '@/components/ui/button';
 import type { ActionResult } from '@/lib/schemas/action-result';
-import { signInSchema } from '@/lib/schemas/sign-in';
 
 /** An account of the demonstration, shown to everybody who comes to its sign-in page. */
 interface DemoAccount {
@@ -36,7 +35,7 @@ async function prove({ email, password }: { email: string; password: string }): 
  */
 export function SignInForm({ next, accounts }: { next: string; accounts: readonly DemoAccount[] }) {
   const state = useActionForm({
-    schema: signInSchema,
+    schema: () => import('@/lib/schemas/sign-in').then((module) => module.signInSchema),
     action: prove,
     defaultValues: { email: '', password: '' },
     // The whole page is loaded anew: nothing a visitor saw is kept.

@@ -1,9 +1,7 @@
 import { z } from 'zod';
 import { emailSchema } from './email';
 import { printedNameSchema } from './installation-inputs';
-import { newPasswordSchema, SHORTEST_PASSWORD } from './password';
-
-export { SHORTEST_PASSWORD };
+import { newPasswordSchema } from './password';
 
 /** What the form of each kind of single-use link asks for, beside the link's token. */
 export const setPasswordSchema = {

@@ -1,7 +1,7 @@
 import { z } from 'zod';
+import { SHORTEST_PASSWORD } from './password-length';
 import { TEXT_LIMITS } from './trial-inputs';
 
-export const SHORTEST_PASSWORD = 12;
 export const LONGEST_PASSWORD = TEXT_LIMITS.password;
 
 /** Words every guesser tries first in this place, beside those of the person (OWASP ASVS 5.0, 6.2.11). */
