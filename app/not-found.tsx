@@ -1,4 +1,4 @@
-import Link from 'next/link';
+import { PageLink } from '@/components/ui/page-link';
 import { connection } from 'next/server';
 import { PageTitle } from '@/components/layout/page-title';
 import { Sheet } from '@/components/layout/sheet';
@@ -12,9 +12,7 @@ export default async function NotFound() {
         Not found
       </PageTitle>
       <p>
-        <Link href="/" prefetch={false}>
-          Go to Today
-        </Link>
+        <PageLink href="/">Go to Today</PageLink>
       </p>
     </Sheet>
   );

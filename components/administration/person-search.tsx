@@ -1,4 +1,4 @@
-import Link from 'next/link';
+import { PageLink } from '@/components/ui/page-link';
 import { Button } from '@/components/ui/button';
 
 /** A search among more people than one page lists: a plain form, answered by the server. */
@@ -21,11 +21,7 @@ export function PersonSearch({ search, listed, found }: { search: string; listed
       <Button small>Find</Button>
       <p className="self-center text-sm text-ink-soft">
         {listed < found ? `The first ${listed} of ${found} are listed.` : `${found} found.`}{' '}
-        {search ? (
-          <Link href="/administration/people" prefetch={false}>
-            Show everyone
-          </Link>
-        ) : null}
+        {search ? <PageLink href="/administration/people">Show everyone</PageLink> : null}
       </p>
     </form>
   );

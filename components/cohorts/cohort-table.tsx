@@ -1,4 +1,4 @@
-import Link from 'next/link';
+import { PageLink } from '@/components/ui/page-link';
 import { StaticTable } from '../tables/static-table';
 import type { Column } from '../tables/columns';
 import { StateChip } from '../ui/chip';
@@ -59,9 +59,7 @@ export function CohortTable({
     },
     content: {
       number: (
-        <Link href={`/trials/${trialCode}/cohorts/${cohort.number}`} prefetch={false}>
-          Cohort {cohort.number}
-        </Link>
+        <PageLink href={`/trials/${trialCode}/cohorts/${cohort.number}`}>Cohort {cohort.number}</PageLink>
       ),
       state: <StateChip state={cohort.standing.state} word={cohort.standing.word} />,
     },

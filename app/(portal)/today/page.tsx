@@ -1,5 +1,5 @@
 import type { Metadata } from 'next';
-import Link from 'next/link';
+import { PageLink } from '@/components/ui/page-link';
 import { Caution } from '@/components/caution/caution';
 import { PageTitle } from '@/components/layout/page-title';
 import { Section } from '@/components/layout/section';
@@ -16,9 +16,9 @@ function WaitingLine({ line }: { line: Waiting }) {
   return (
     <li className="grid gap-x-4 gap-y-0.5 border-b border-line py-3 md:grid-cols-[7rem_minmax(0,1fr)_auto]">
       <span className="font-mono text-xs text-ink-soft">{line.trialCode}</span>
-      <Link href={line.href} prefetch={false} className="font-semibold">
+      <PageLink href={line.href} className="font-semibold">
         {line.what}
-      </Link>
+      </PageLink>
       <span className={line.isOverdue ? 'text-sm font-semibold text-ochre' : 'text-sm text-ink-soft'}>
         {line.at ? (
           <>
@@ -46,9 +46,7 @@ export default async function TodayPage() {
             <ul className="grid gap-2">
               {trials.map((trial) => (
                 <li key={trial.code}>
-                  <Link href={`/trials/${trial.code}`} prefetch={false}>
-                    {trial.code}
-                  </Link>{' '}
+                  <PageLink href={`/trials/${trial.code}`}>{trial.code}</PageLink>{' '}
                   <StateChip state={trial.state} />
                   <br />
                   {trial.roleName}
@@ -63,8 +61,9 @@ export default async function TodayPage() {
       {reader.isAdministrator ? (
         <Section title="The installation">
           <p>
-            People, sites, trials and mail are under <Link href="/administration">Administration</Link>. No
-            clinical data is shown to an administrator.
+            People, sites, trials and mail are under{' '}
+            <PageLink href="/administration">Administration</PageLink>. No clinical data is shown to an
+            administrator.
           </p>
         </Section>
       ) : null}

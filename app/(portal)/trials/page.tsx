@@ -1,5 +1,5 @@
 import type { Metadata } from 'next';
-import Link from 'next/link';
+import { PageLink } from '@/components/ui/page-link';
 import { Caution } from '@/components/caution/caution';
 import { PageTitle } from '@/components/layout/page-title';
 import { Sheet } from '@/components/layout/sheet';
@@ -39,11 +39,7 @@ export default async function TrialsPage() {
             cohortState: trial.cohortState,
           },
           content: {
-            code: (
-              <Link href={`/trials/${trial.code}`} prefetch={false}>
-                {trial.code}
-              </Link>
-            ),
+            code: <PageLink href={`/trials/${trial.code}`}>{trial.code}</PageLink>,
           },
         }))}
         empty={

@@ -1,5 +1,5 @@
 import type { Metadata } from 'next';
-import Link from 'next/link';
+import { PageLink } from '@/components/ui/page-link';
 import { notFound } from 'next/navigation';
 import { RecipientFilter } from '@/components/caught-mail/recipient-filter';
 import { PageTitle } from '@/components/layout/page-title';
@@ -45,11 +45,7 @@ export default async function CaughtMailPage({ searchParams }: Props) {
           id: String(mail.id),
           values: mail,
           content: {
-            subject: (
-              <Link href={`/caught-mail/${mail.id}`} prefetch={false}>
-                {mail.subject || 'No subject'}
-              </Link>
-            ),
+            subject: <PageLink href={`/caught-mail/${mail.id}`}>{mail.subject || 'No subject'}</PageLink>,
           },
         }))}
         empty={
@@ -62,14 +58,12 @@ export default async function CaughtMailPage({ searchParams }: Props) {
       />
       <nav aria-label="Older and newer mails" className="mt-5 flex gap-6">
         {filter.before === null ? null : (
-          <Link href={caughtMailListPath({ to: filter.to })} prefetch={false}>
-            Newest mails
-          </Link>
+          <PageLink href={caughtMailListPath({ to: filter.to })}>Newest mails</PageLink>
         )}
         {list.olderThan === null ? null : (
-          <Link href={caughtMailListPath({ to: filter.to, before: list.olderThan })} prefetch={false}>
+          <PageLink href={caughtMailListPath({ to: filter.to, before: list.olderThan })}>
             Older mails
-          </Link>
+          </PageLink>
         )}
       </nav>
     </Sheet>

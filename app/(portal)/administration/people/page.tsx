@@ -1,5 +1,5 @@
 import type { Metadata } from 'next';
-import Link from 'next/link';
+import { PageLink } from '@/components/ui/page-link';
 import { InviteForm } from '@/components/administration/invite-form';
 import { PersonSearch } from '@/components/administration/person-search';
 import { PersonState } from '@/components/administration/state-chips';
@@ -65,9 +65,7 @@ export default async function PeoplePage({
             },
             content: {
               name: (
-                <Link href={`/administration/people/${person.personId}`} prefetch={false}>
-                  {person.printedName}
-                </Link>
+                <PageLink href={`/administration/people/${person.personId}`}>{person.printedName}</PageLink>
               ),
               state: <PersonState state={person.state} />,
             },

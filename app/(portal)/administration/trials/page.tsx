@@ -1,5 +1,5 @@
 import type { Metadata } from 'next';
-import Link from 'next/link';
+import { PageLink } from '@/components/ui/page-link';
 import { candidateChoices } from '@/components/administration/candidate-choices';
 import { TrialForm } from '@/components/administration/trial-form';
 import { PageTitle } from '@/components/layout/page-title';
@@ -45,11 +45,7 @@ export default async function TrialsPage() {
               created: trial.createdAt,
             },
             content: {
-              code: (
-                <Link href={`/administration/trials/${trial.code}`} prefetch={false}>
-                  {trial.code}
-                </Link>
-              ),
+              code: <PageLink href={`/administration/trials/${trial.code}`}>{trial.code}</PageLink>,
             },
           }))}
           empty={<EmptyState title="No trial yet">Create the first one below.</EmptyState>}
@@ -59,10 +55,8 @@ export default async function TrialsPage() {
         {people.length === 0 ? (
           <p className="max-w-prose">
             A trial needs a statistician, and there is nobody to choose yet.{' '}
-            <Link href="/administration/people#invite" prefetch={false}>
-              Invite a person
-            </Link>{' '}
-            who is no administrator first.
+            <PageLink href="/administration/people#invite">Invite a person</PageLink> who is no administrator
+            first.
           </p>
         ) : (
           <TrialForm people={candidateChoices(people)} action={createTrial} />

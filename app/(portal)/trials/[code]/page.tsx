@@ -1,5 +1,5 @@
 import type { Metadata } from 'next';
-import Link from 'next/link';
+import { PageLink } from '@/components/ui/page-link';
 import { notFound, redirect } from 'next/navigation';
 import { Caution } from '@/components/caution/caution';
 import { PageTitle } from '@/components/layout/page-title';
@@ -80,34 +80,23 @@ function OverviewMargin({ view }: { view: OverviewView }) {
     <MarginNote title="What next">
       {view.roleActs === 'records' && cohort ? (
         <p>
-          <Link href={`${base}/cohorts/${cohort.number}`} prefetch={false}>
-            Open cohort {cohort.number}
-          </Link>
-          : places, dosing and outcomes of your site.
+          <PageLink href={`${base}/cohorts/${cohort.number}`}>Open cohort {cohort.number}</PageLink>: places,
+          dosing and outcomes of your site.
         </p>
       ) : null}
       {view.roleActs === 'signs' ? (
         <p>
-          <Link href={`${base}/review`} prefetch={false}>
-            Review
-          </Link>{' '}
-          shows what waits for signatures.
+          <PageLink href={`${base}/review`}>Review</PageLink> shows what waits for signatures.
         </p>
       ) : null}
       {view.roleActs === 'designs' ? (
         <p>
-          <Link href={`${base}/design`} prefetch={false}>
-            Design
-          </Link>{' '}
-          shows the rule and its settings.
+          <PageLink href={`${base}/design`}>Design</PageLink> shows the rule and its settings.
         </p>
       ) : null}
       {view.roleActs === 'reads' ? (
         <p>
-          <Link href={`${base}/trail`} prefetch={false}>
-            Trail
-          </Link>{' '}
-          holds everything that was done.
+          <PageLink href={`${base}/trail`}>Trail</PageLink> holds everything that was done.
         </p>
       ) : null}
     </MarginNote>

@@ -1,5 +1,5 @@
 import type { Metadata } from 'next';
-import Link from 'next/link';
+import { PageLink } from '@/components/ui/page-link';
 import { notFound } from 'next/navigation';
 import { TextWithLinks } from '@/components/caught-mail/text-with-links';
 import { PageTitle } from '@/components/layout/page-title';
@@ -24,9 +24,7 @@ export default async function CaughtMailPage({ params }: { params: Promise<{ id:
         <>
           <MarginNote title="To">
             <p>
-              <Link href={caughtMailListPath({ to: mail.to })} prefetch={false}>
-                {mail.to}
-              </Link>
+              <PageLink href={caughtMailListPath({ to: mail.to })}>{mail.to}</PageLink>
             </p>
           </MarginNote>
           <MarginNote title="Caught">
@@ -35,9 +33,7 @@ export default async function CaughtMailPage({ params }: { params: Promise<{ id:
             </p>
           </MarginNote>
           <p className="text-sm">
-            <Link href="/caught-mail" prefetch={false}>
-              All caught mail
-            </Link>
+            <PageLink href="/caught-mail">All caught mail</PageLink>
           </p>
         </>
       }

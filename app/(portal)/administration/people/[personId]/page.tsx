@@ -1,5 +1,5 @@
 import type { Metadata } from 'next';
-import Link from 'next/link';
+import { PageLink } from '@/components/ui/page-link';
 import { notFound } from 'next/navigation';
 import { PersonActs } from '@/components/administration/person-acts';
 import { PersonState } from '@/components/administration/state-chips';
@@ -46,9 +46,7 @@ export default async function PersonPageView({ params }: { params: Promise<{ per
       }
     >
       <p className="mb-1 text-sm">
-        <Link href="/administration/people" prefetch={false}>
-          People
-        </Link>
+        <PageLink href="/administration/people">People</PageLink>
       </p>
       <PageTitle>{person.printedName}</PageTitle>
       <Section title="Account">
@@ -94,9 +92,9 @@ export default async function PersonPageView({ params }: { params: Promise<{ per
             },
             content: {
               trial: (
-                <Link href={`/administration/trials/${membership.trialCode}`} prefetch={false}>
+                <PageLink href={`/administration/trials/${membership.trialCode}`}>
                   {membership.trialCode}
-                </Link>
+                </PageLink>
               ),
             },
           }))}

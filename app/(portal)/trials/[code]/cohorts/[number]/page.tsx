@@ -1,5 +1,5 @@
 import type { Metadata } from 'next';
-import Link from 'next/link';
+import { PageLink } from '@/components/ui/page-link';
 import { notFound } from 'next/navigation';
 import { Caution } from '@/components/caution/caution';
 import { ChangeWatch } from '@/components/cohorts/change-watch';
@@ -66,22 +66,16 @@ function Around({ view }: { view: CohortPageView }) {
         <ul className="grid gap-1">
           {cohort.hasPrevious ? (
             <li>
-              <Link href={`${base}/${cohort.number - 1}`} prefetch={false}>
-                Cohort {cohort.number - 1}
-              </Link>
+              <PageLink href={`${base}/${cohort.number - 1}`}>Cohort {cohort.number - 1}</PageLink>
             </li>
           ) : null}
           {cohort.hasNext ? (
             <li>
-              <Link href={`${base}/${cohort.number + 1}`} prefetch={false}>
-                Cohort {cohort.number + 1}
-              </Link>
+              <PageLink href={`${base}/${cohort.number + 1}`}>Cohort {cohort.number + 1}</PageLink>
             </li>
           ) : null}
           <li>
-            <Link href={base} prefetch={false}>
-              All cohorts
-            </Link>
+            <PageLink href={base}>All cohorts</PageLink>
           </li>
         </ul>
       </MarginNote>
