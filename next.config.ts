@@ -17,6 +17,8 @@ const nextConfig: NextConfig = {
   // A second development server in one tree needs a folder of its own.
   distDir: process.env.NEXT_DIST_DIR ?? '.next',
   reactStrictMode: true,
+  // `npm test` checks the types of everything; a start need not check them again.
+  typescript: { ignoreBuildErrors: true },
   poweredByHeader: false,
   // The development server would print the arguments of actions, passwords among them.
   logging: { serverFunctions: false },

@@ -55,7 +55,7 @@ export default async function SummaryPage({ params }: { params: Promise<{ code: 
             <StaticTable
               caption="Signed doses by cohort"
               columns={[
-                { key: 'number', header: 'Cohort', kind: 'number', rowHeader: true },
+                { key: 'number', header: 'Cohort', rowHeader: true },
                 { key: 'dose', header: 'Dose', strong: true },
                 { key: 'released', header: 'Released', kind: 'day' },
                 { key: 'state', header: 'Cohort is', kind: 'state' },
