@@ -13,7 +13,7 @@ beforeAll(async () => {
 beforeEach(() => database.asOwner((owner) => owner.query('DELETE FROM outbox')));
 
 async function queue(
-  fields: { priority?: number; cause?: string; minutesAgo?: number } = {},
+  fields: { priority?: number; cause?: string; minutesAgo?: number; payload?: object } = {},
 ): Promise<string> {
   const id = randomUUID();
   await database.asOwner((owner) =>
