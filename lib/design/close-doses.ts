@@ -31,7 +31,7 @@ function lowestClosed(compiled: CompiledDesign, trial: TrialState): number {
   for (let i = 0; i < trial.groups; i += 1) {
     n += trial.groupN[i] as number;
     y += trial.groupY[i] as number;
-    if (criterion.isMet(n, y)) return highestBelow(doses, trial.groupX[i] as number) + 1;
+    if (criterion.isMet(n, y)) return highestBelow(doses.workings, trial.groupX, i) + 1;
   }
   return doses.count;
 }

@@ -18,9 +18,13 @@ export interface CompiledDesign {
   /** w(starting dose). */
   readonly start: number;
   readonly startIndex: number;
-  /** Projection of step 3. */
-  readonly lowest: number;
-  readonly highest: number;
+  /** Steps 2 and 3: x ≤ g × riseTimes + riseAdd, and the projection to [lowest, highest]. */
+  readonly bounds: {
+    readonly riseTimes: number;
+    readonly riseAdd: number;
+    readonly lowest: number;
+    readonly highest: number;
+  };
   readonly tiesHigher: boolean;
   readonly closing: ClosingCriterion | null;
 }
@@ -43,8 +47,11 @@ export function compileDesign(design: Design): CompiledDesign {
     target: design.target,
     start: doses.working(startIndex),
     startIndex,
-    lowest: projection?.lowest ?? doses.working(0),
-    highest: projection?.highest ?? doses.working(doses.count - 1),
+    bounds: {
+      ...riseOf(design),
+      lowest: projection?.lowest ?? doses.working(0),
+      highest: projection?.highest ?? doses.working(doses.count - 1),
+    },
     tiesHigher: design.guardrails.ties === 'higher',
     closing: closing === null ? null : new ClosingCriterion(closing, design.target),
   };
@@ -76,12 +83,14 @@ export function startRule(compiled: CompiledDesign, trial: TrialState, x1: numbe
   compiled.rule.initialise(compiled.design.rule, compiled.sign * x1, trial);
 }
 
-/** Step 2: the highest value allowed after g (real working values); Infinity when no rise is bounded. */
-export function riseBound(compiled: CompiledDesign, g: number): number {
-  const rise = compiled.design.guardrails.largestRise;
-  if (rise === null) return Infinity;
-  if (rise.kind === 'step') return g + rise.step;
-  return compiled.design.scale === 'log' ? g + Math.log(rise.factor) : g * rise.factor;
+/** Step 2 as g ↦ g × times + add; without a bound the result is infinite. */
+function riseOf({ guardrails, scale }: Design): { riseTimes: number; riseAdd: number } {
+  const rise = guardrails.largestRise;
+  if (rise === null) return { riseTimes: 1, riseAdd: Infinity };
+  if (rise.kind === 'step') return { riseTimes: 1, riseAdd: rise.step };
+  return scale === 'log'
+    ? { riseTimes: 1, riseAdd: Math.log(rise.factor) }
+    : { riseTimes: rise.factor, riseAdd: 0 };
 }
 
 /** w(d) of a dose on this design's scale. */

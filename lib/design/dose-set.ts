@@ -2,100 +2,57 @@ import type { Design } from '@/lib/schemas/design';
 import type { Dose } from '@/lib/schemas/dose';
 import { decimalToNumber } from './decimal';
 import { exactGrid, gridDecimal, gridIndex, gridValue, type ExactGrid } from './dose-grid';
-import { fromWorking, toWorking, type Scale } from './scale';
+import { toWorking, type Scale } from './scale';
 
 /** Share of a gap within which a value counts as lying on its midpoint or bound. */
 export const TIE_SHARE = 1e-9;
 
-/**
- * The doses a design can release, lowest first, by index from 0: listed levels, or a grid. All methods but `dose` and
- * `indexOf` allocate nothing.
- */
-export interface DoseSet {
+/** The doses a design can release, lowest first, by index from 0: listed levels, or a grid. */
+export class DoseSet {
   readonly kind: Design['doses']['kind'];
   readonly count: number;
-  /** Exact decimal of a dose. */
-  dose(index: number): Dose;
-  /** The same as a double, in the trial's unit. */
-  value(index: number): number;
-  /** w(dose). */
-  working(index: number): number;
-  /** Index of a design dose (canonical decimal), or −1. */
-  indexOf(dose: Dose): number;
-  /** Rough index near x, any integer; {@link nearestIndex} corrects it. */
-  guess(x: number): number;
-}
+  /** w of each dose. */
+  readonly workings: Float64Array;
 
-class LevelSet implements DoseSet {
-  readonly kind = 'levels';
-  readonly count: number;
-  private readonly values: Float64Array;
-  private readonly workings: Float64Array;
-
+  /** @param levels canonical decimals, rising; empty for a grid. */
   constructor(
     private readonly levels: readonly Dose[],
+    private readonly grid: ExactGrid | null,
     scale: Scale,
   ) {
-    this.count = levels.length;
-    this.values = Float64Array.from(levels, decimalToNumber);
-    this.workings = this.values.map((value) => toWorking(scale, value));
+    this.kind = grid === null ? 'levels' : 'range';
+    this.count = grid === null ? levels.length : grid.count;
+    this.workings = new Float64Array(this.count);
+    for (let i = 0; i < this.count; i += 1) this.workings[i] = toWorking(scale, this.value(i));
   }
 
+  /** Exact decimal of a dose. */
   dose(index: number): Dose {
-    return this.levels[index] as Dose;
+    return this.grid === null ? (this.levels[index] as Dose) : gridDecimal(this.grid, index);
   }
+
+  /** The same as a double, in the trial's unit. */
   value(index: number): number {
-    return this.values[index] as number;
+    return this.grid === null ? decimalToNumber(this.levels[index] as Dose) : gridValue(this.grid, index);
   }
+
+  /** w(dose). */
   working(index: number): number {
     return this.workings[index] as number;
   }
+
+  /** Index of a design dose (canonical decimal), or −1. */
   indexOf(dose: Dose): number {
-    return this.levels.indexOf(dose);
-  }
-  guess(): number {
-    return 0;
-  }
-}
-
-class GridSet implements DoseSet {
-  readonly kind = 'range';
-  readonly count: number;
-  private readonly step: number;
-  private readonly lowest: number;
-
-  constructor(
-    private readonly grid: ExactGrid,
-    private readonly scale: Scale,
-  ) {
-    this.count = grid.count;
-    this.lowest = gridValue(grid, 0);
-    this.step = gridValue(grid, 1) - this.lowest;
-  }
-
-  dose(index: number): Dose {
-    return gridDecimal(this.grid, index);
-  }
-  value(index: number): number {
-    return gridValue(this.grid, index);
-  }
-  working(index: number): number {
-    return toWorking(this.scale, gridValue(this.grid, index));
-  }
-  indexOf(dose: Dose): number {
-    return gridIndex(this.grid, dose);
-  }
-  guess(x: number): number {
-    return Math.floor((fromWorking(this.scale, x) - this.lowest) / this.step);
+    return this.grid === null ? this.levels.indexOf(dose) : gridIndex(this.grid, dose);
   }
 }
 
 /** The doses of a validated design. Throws a RangeError for doses its schema would have refused. */
 export function doseSetOf(doses: Design['doses'], scale: Scale): DoseSet {
-  if (doses.kind === 'levels') return new LevelSet(doses.levels, scale);
+  if (doses.kind === 'levels') return new DoseSet(doses.levels, null, scale);
   const grid = exactGrid(doses.lowest, doses.highest, doses.increment);
   if (typeof grid === 'string') throw new RangeError(`The range of doses is no grid: ${grid}.`);
-  return new GridSet(grid, scale);
+  return new DoseSet([], grid, scale);
 }
 
 /** The midpoint of dose i and the next on the working scale. */
@@ -109,19 +66,33 @@ export function midpoint(doses: DoseSet, index: number): number {
  * and goes to the lower dose, or to the higher where `tiesHigher`. Beyond the ends: the end dose.
  */
 export function nearestIndex(doses: DoseSet, x: number, tiesHigher: boolean): number {
-  const last = doses.count - 1;
-  const guess = doses.guess(x);
-  let index = guess > 0 ? (guess < last ? guess : last) : 0;
-  while (index > 0 && isAtMostMidpoint(doses, index - 1, x, tiesHigher)) index -= 1;
-  while (index < last && !isAtMostMidpoint(doses, index, x, tiesHigher)) index += 1;
-  return index;
+  return nearestIndexAt(doses.workings, Float64Array.of(x), 0, tiesHigher);
 }
 
-function isAtMostMidpoint(doses: DoseSet, index: number, x: number, tiesHigher: boolean): boolean {
-  const low = doses.working(index);
-  const gap = doses.working(index + 1) - low;
-  const middle = low + gap / 2;
-  return tiesHigher ? x < middle - TIE_SHARE * gap : x <= middle + TIE_SHARE * gap;
+/**
+ * The same for `values[at]` among rising working values. Numbers come in and go out through typed arrays because a double
+ * handed to a function that is not inlined is boxed, and a step must allocate nothing.
+ */
+export function nearestIndexAt(
+  workings: Float64Array,
+  values: Float64Array,
+  at: number,
+  tiesHigher: boolean,
+): number {
+  const x = values[at] as number;
+  const share = tiesHigher ? -TIE_SHARE : TIE_SHARE;
+  let low = 0;
+  let high = workings.length - 1;
+  // the lowest dose whose midpoint above is not passed; midpoints rise, so halve
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    const dose = workings[middle] as number;
+    const gap = (workings[middle + 1] as number) - dose;
+    const bound = dose + gap / 2 + share * gap;
+    if (tiesHigher ? x < bound : x <= bound) high = middle;
+    else low = middle + 1;
+  }
+  return low;
 }
 
 /** True when x lies within 1e-9 of a gap of the midpoint above dose `index`. */
@@ -132,30 +103,30 @@ export function isTie(doses: DoseSet, index: number, x: number): boolean {
 }
 
 /**
- * Index of the highest dose at most `bound` on the working scale, one that exceeds it by at most 1e-9 of the gap below it
- * included; −1 when even the lowest exceeds it.
+ * Index of the highest dose at most `values[at]`, one that exceeds it by at most 1e-9 of the gap below it included; −1 when
+ * even the lowest exceeds it.
  */
-export function highestAtMost(doses: DoseSet, bound: number): number {
-  const last = doses.count - 1;
-  const guess = doses.guess(bound);
-  let index = guess > 0 ? (guess < last ? guess : last) : 0;
-  while (index < last && isWithin(doses, index + 1, bound)) index += 1;
-  while (index >= 0 && !isWithin(doses, index, bound)) index -= 1;
+export function highestAtMost(workings: Float64Array, values: Float64Array, at: number): number {
+  const bound = values[at] as number;
+  let index = workings.length - 1;
+  while (index >= 0) {
+    const x = workings[index] as number;
+    const gap = index > 0 ? x - (workings[index - 1] as number) : (workings[1] as number) - x;
+    if (x <= bound + TIE_SHARE * gap) break;
+    index -= 1;
+  }
   return index;
 }
 
-function isWithin(doses: DoseSet, index: number, bound: number): boolean {
-  const x = doses.working(index);
-  const neighbour = index > 0 ? doses.working(index - 1) : doses.working(1);
-  return x <= bound + TIE_SHARE * Math.abs(x - neighbour);
-}
-
-/** Index of the highest dose strictly below x on the working scale; −1 when there is none. */
-export function highestBelow(doses: DoseSet, x: number): number {
-  const last = doses.count - 1;
-  const guess = doses.guess(x);
-  let index = guess > 0 ? (guess < last ? guess : last) : 0;
-  while (index < last && doses.working(index + 1) < x) index += 1;
-  while (index >= 0 && doses.working(index) >= x) index -= 1;
-  return index;
+/** Index of the highest dose strictly below `values[at]`; −1 when there is none. */
+export function highestBelow(workings: Float64Array, values: Float64Array, at: number): number {
+  const x = values[at] as number;
+  let low = -1;
+  let high = workings.length - 1;
+  while (low < high) {
+    const middle = (low + high + 1) >> 1;
+    if ((workings[middle] as number) < x) low = middle;
+    else high = middle - 1;
+  }
+  return low;
 }

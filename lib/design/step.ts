@@ -1,6 +1,6 @@
 import { closeDoses } from './close-doses';
-import { riseBound, type CompiledDesign } from './compiled';
-import { highestAtMost, nearestIndex, TIE_SHARE } from './dose-set';
+import type { CompiledDesign } from './compiled';
+import { highestAtMost, nearestIndexAt, TIE_SHARE } from './dose-set';
 import { STEP, type StepStatus } from './rules/rule';
 import { judgeStop } from './stopping';
 import { GUARD, PLACE, RULE, type TrialState } from './trial-state';
@@ -19,14 +19,32 @@ export function completeCohort(
   released: number,
   lowered: boolean,
 ): StepStatus {
-  if (!recordCohort(compiled, trial, released, lowered)) {
+  trial.guard[GUARD.RELEASED] = released;
+  return complete(compiled, trial, lowered);
+}
+
+/** {@link completeCohort} for a cohort released at design dose `index` (no double changes hands). */
+export function completeCohortAt(
+  compiled: CompiledDesign,
+  trial: TrialState,
+  index: number,
+  lowered: boolean,
+): StepStatus {
+  trial.guard[GUARD.RELEASED] = compiled.doses.workings[index] as number;
+  return complete(compiled, trial, lowered);
+}
+
+function complete(compiled: CompiledDesign, trial: TrialState, lowered: boolean): StepStatus {
+  if (!record(compiled, trial, lowered)) {
     judgeStop(compiled, trial);
     return STEP.done;
   }
   trial.rule[RULE.BEFORE] = trial.rule[RULE.X] as number;
   const status = compiled.rule.step(compiled.context, trial);
   if (status !== STEP.done) return status;
-  guard(compiled, trial);
+  boundValue(compiled, trial);
+  placeDose(compiled, trial);
+  carry(compiled, trial);
   judgeStop(compiled, trial);
   return STEP.done;
 }
@@ -34,6 +52,8 @@ export function completeCohort(
 /**
  * Enters the cohort at hand into the counts without a step of the rule (a cohort of an earlier version of the design).
  * Returns false for a cohort without an evaluable subject: nothing but the number of cohorts changes.
+ *
+ * @param released w(dose released), real.
  */
 export function recordCohort(
   compiled: CompiledDesign,
@@ -41,85 +61,96 @@ export function recordCohort(
   released: number,
   lowered: boolean,
 ): boolean {
-  const { doses, sign } = compiled;
-  if (trial.closeCohort(sign) === 0) return false;
-  trial.lowered = lowered;
-  const given = trial.guard[GUARD.GIVEN] as number;
-  const lower = released < given ? released : given;
   trial.guard[GUARD.RELEASED] = released;
-  trial.guard[GUARD.LOWER] = lower;
-  trial.place[PLACE.CURRENT] = nearestIndex(doses, lower, false);
-  if (doses.kind === 'levels') {
-    for (let i = 0; i < trial.cohortDoses; i += 1) {
-      const level = nearestIndex(doses, trial.cohortX[i] as number, false);
-      trial.levelN[level] = (trial.levelN[level] as number) + (trial.cohortN[i] as number);
-      trial.levelY[level] = (trial.levelY[level] as number) + (trial.cohortY[i] as number);
+  return record(compiled, trial, lowered);
+}
+
+function record(compiled: CompiledDesign, trial: TrialState, lowered: boolean): boolean {
+  if (trial.closeCohort(compiled.sign) === 0) return false;
+  const { guard, place } = trial;
+  const { workings } = compiled.doses;
+  trial.lowered = lowered;
+  const released = guard[GUARD.RELEASED] as number;
+  const given = guard[GUARD.GIVEN] as number;
+  guard[GUARD.LOWER] = released < given ? released : given;
+  place[PLACE.CURRENT] = nearestIndexAt(workings, guard, GUARD.LOWER, false);
+  if (compiled.doses.kind === 'levels') {
+    const { levelN, levelY, cohortX, cohortN, cohortY, cohortDoses } = trial;
+    let level = 0;
+    for (let i = 0; i < cohortDoses; i += 1) {
+      level = nearestIndexAt(workings, cohortX, i, false);
+      levelN[level] = (levelN[level] as number) + (cohortN[i] as number);
+      levelY[level] = (levelY[level] as number) + (cohortY[i] as number);
     }
-    const highestGiven = nearestIndex(doses, trial.cohortX[trial.cohortDoses - 1] as number, false);
-    const releasedLevel = nearestIndex(doses, released, false);
-    const tried = releasedLevel < highestGiven ? releasedLevel : highestGiven;
-    if (tried > (trial.place[PLACE.TRIED] as number)) trial.place[PLACE.TRIED] = tried;
+    // the cohort's doses rise, so `level` is now that of its highest
+    const releasedLevel = nearestIndexAt(workings, guard, GUARD.RELEASED, false);
+    const tried = releasedLevel < level ? releasedLevel : level;
+    if (tried > (place[PLACE.TRIED] as number)) place[PLACE.TRIED] = tried;
   }
   return true;
 }
 
-/** Steps 2 to 7. */
-function guard(compiled: CompiledDesign, trial: TrialState): void {
-  const { doses, sign } = compiled;
-  const { guard: g, place, rule } = trial;
-  const raw = sign * (rule[RULE.NEXT] as number);
-  const bound = riseBound(compiled, g[GUARD.LOWER] as number);
+/** Steps 2 and 3: from the raw value to the projected one. */
+function boundValue(compiled: CompiledDesign, trial: TrialState): void {
+  const { guard, rule } = trial;
+  const { riseAdd, riseTimes, lowest, highest } = compiled.bounds;
+  const raw = compiled.sign * (rule[RULE.NEXT] as number);
+  const bound = (guard[GUARD.LOWER] as number) * riseTimes + riseAdd;
   const afterRise = raw > bound ? bound : raw;
-  const projected =
-    afterRise < compiled.lowest
-      ? compiled.lowest
-      : afterRise > compiled.highest
-        ? compiled.highest
-        : afterRise;
-  g[GUARD.RAW] = raw;
-  g[GUARD.RISE_BOUND] = bound;
-  g[GUARD.AFTER_RISE] = afterRise;
-  g[GUARD.PROJECTED] = projected;
+  const projected = afterRise < lowest ? lowest : afterRise > highest ? highest : afterRise;
+  guard[GUARD.RAW] = raw;
+  guard[GUARD.RISE_BOUND] = bound;
+  guard[GUARD.AFTER_RISE] = afterRise;
+  guard[GUARD.PROJECTED] = projected;
   trial.iterates[trial.steps] = projected;
+}
 
+/** Steps 4 to 7: from the projected value to the recommended dose. */
+function placeDose(compiled: CompiledDesign, trial: TrialState): void {
+  const { guard, place } = trial;
   const current = place[PLACE.CURRENT] as number;
-  const nearest = nearestIndex(doses, projected, compiled.tiesHigher);
-  place[PLACE.NEAREST] = nearest;
-  place[PLACE.ROUNDED] = withinRise(compiled, nearest, bound, current);
-  place[PLACE.NOT_SKIPPED] = withoutSkipping(compiled, trial, place[PLACE.ROUNDED] as number);
-  place[PLACE.COHERENT] = coherent(compiled, trial, place[PLACE.NOT_SKIPPED] as number);
+  place[PLACE.NEAREST] = nearestIndexAt(compiled.doses.workings, guard, GUARD.PROJECTED, compiled.tiesHigher);
+  place[PLACE.ROUNDED] = withinRise(compiled, trial);
+  place[PLACE.NOT_SKIPPED] = withoutSkipping(compiled, trial);
+  const coherentIndex = coherent(compiled, trial);
+  place[PLACE.COHERENT] = coherentIndex;
   const enough = (trial.size[trial.steps - 1] as number) >= compiled.design.evaluableForRise;
-  const coherentIndex = place[PLACE.COHERENT] as number;
   place[PLACE.ENOUGH] = enough || coherentIndex <= current ? coherentIndex : current;
-
   const previous = place[PLACE.FINAL] as number;
   closeDoses(compiled, trial);
   const final = place[PLACE.FINAL] as number;
-  trial.repeats = final >= 0 && trial.repeats > 0 && final === previous ? trial.repeats + 1 : 1;
-  if (final < 0) trial.repeats = 0;
+  trial.repeats = final < 0 ? 0 : trial.repeats > 0 && final === previous ? trial.repeats + 1 : 1;
+}
 
-  let carried = compiled.carriesProjected ? projected : raw;
+/** What the rule goes on from: the projected value at most the highest open dose, or its raw value (rules 4, 5 `mean`, 6). */
+function carry(compiled: CompiledDesign, trial: TrialState): void {
+  const { guard, rule, place } = trial;
+  let carried = guard[compiled.carriesProjected ? GUARD.PROJECTED : GUARD.RAW] as number;
   const closedFrom = place[PLACE.CLOSED_FROM] as number;
-  if (compiled.carriesProjected && closedFrom > 0 && closedFrom < doses.count) {
-    const highestOpen = doses.working(closedFrom - 1);
+  if (compiled.carriesProjected && closedFrom > 0 && closedFrom < compiled.doses.count) {
+    const highestOpen = compiled.doses.workings[closedFrom - 1] as number;
     if (carried > highestOpen) carried = highestOpen;
   }
-  g[GUARD.CARRIED] = carried;
-  rule[RULE.X] = sign * carried;
+  guard[GUARD.CARRIED] = carried;
+  rule[RULE.X] = compiled.sign * carried;
 }
 
 /** Step 4, second half: a rounded dose that breaks the largest rise gives way to the highest within it. */
-function withinRise(compiled: CompiledDesign, index: number, bound: number, current: number): number {
-  const { doses } = compiled;
-  if (bound === Infinity || index <= current) return index;
-  const x = doses.working(index);
-  if (x <= bound + TIE_SHARE * (x - doses.working(index - 1))) return index;
-  const highest = highestAtMost(doses, bound);
+function withinRise(compiled: CompiledDesign, trial: TrialState): number {
+  const { workings } = compiled.doses;
+  const index = trial.place[PLACE.NEAREST] as number;
+  const current = trial.place[PLACE.CURRENT] as number;
+  if (index <= current) return index;
+  const x = workings[index] as number;
+  const gap = x - (workings[index - 1] as number);
+  if (x <= (trial.guard[GUARD.RISE_BOUND] as number) + TIE_SHARE * gap) return index;
+  const highest = highestAtMost(workings, trial.guard, GUARD.RISE_BOUND);
   return highest > current ? highest : current;
 }
 
 /** Step 5. */
-function withoutSkipping(compiled: CompiledDesign, trial: TrialState, index: number): number {
+function withoutSkipping(compiled: CompiledDesign, trial: TrialState): number {
+  const index = trial.place[PLACE.ROUNDED] as number;
   const rule = compiled.design.guardrails.noSkipping;
   if (rule === 'off' || compiled.doses.kind !== 'levels') return index;
   const reached = trial.place[rule === 'current' ? PLACE.CURRENT : PLACE.TRIED] as number;
@@ -127,7 +158,8 @@ function withoutSkipping(compiled: CompiledDesign, trial: TrialState, index: num
 }
 
 /** Step 6. */
-function coherent(compiled: CompiledDesign, trial: TrialState, index: number): number {
+function coherent(compiled: CompiledDesign, trial: TrialState): number {
+  const index = trial.place[PLACE.NOT_SKIPPED] as number;
   const rule = compiled.design.guardrails.coherence;
   if (rule === 'off') return index;
   const current = trial.place[PLACE.CURRENT] as number;

@@ -93,6 +93,9 @@ export class TrialState {
   cohortN: Float64Array;
   cohortY: Float64Array;
 
+  /** Numbers a rule remembers by step, kept from trial to trial (see {@link remembered}). */
+  private memory = new Float64Array(0);
+
   /** Buffers of the logit fit, made by the rule that needs them. */
   regression: BinaryRegression | null = null;
 
@@ -182,7 +185,15 @@ export class TrialState {
       this.cohortN = grown(this.cohortN, this.cohortDoses + 1);
       this.cohortY = grown(this.cohortY, this.cohortDoses + 1);
     }
-    this.cohortDoses = insert(this.cohortX, this.cohortN, this.cohortY, this.cohortDoses, x, n, y);
+    ENTRY[0] = x;
+    ENTRY[1] = n;
+    ENTRY[2] = y;
+    this.cohortDoses = insert(this.cohortX, this.cohortN, this.cohortY, this.cohortDoses);
+  }
+
+  /** The same for subjects given `workings[index]`, a dose of the design. */
+  addSubjectsAt(workings: Float64Array, index: number, n: number, y: number): void {
+    this.addSubjects(workings[index] as number, n, y);
   }
 
   /** Enters the cohort at hand into the counts by dose; returns its number of evaluable subjects. */
@@ -199,15 +210,10 @@ export class TrialState {
       y += this.cohortY[i] as number;
       // measured from the lowest dose, so that the mean of equal doses is that dose exactly
       shift += n * (x - first);
-      this.groups = insert(
-        this.groupX,
-        this.groupN,
-        this.groupY,
-        this.groups,
-        x,
-        n,
-        this.cohortY[i] as number,
-      );
+      ENTRY[0] = x;
+      ENTRY[1] = n;
+      ENTRY[2] = this.cohortY[i] as number;
+      this.groups = insert(this.groupX, this.groupN, this.groupY, this.groups);
     }
     this.cohorts += 1;
     if (m === 0) return 0;
@@ -220,6 +226,13 @@ export class TrialState {
     this.subjects += m;
     this.responses += y;
     return m;
+  }
+
+  /** Room for `width` numbers a step, zero at first and kept until this state is let go; for results that no outcome enters. */
+  remembered(width: number): Float64Array {
+    const needed = width * this.given.length;
+    if (this.memory.length < needed) this.memory = grown(this.memory, needed);
+    return this.memory;
   }
 
   /** The logit buffers, with room for all distinct doses. */
@@ -237,21 +250,17 @@ function grown(array: Float64Array, size: number): Float64Array<ArrayBuffer> {
   return larger;
 }
 
-/** Adds counts at x to rows sorted by x; returns the number of rows. */
-function insert(
-  xs: Float64Array,
-  ns: Float64Array,
-  ys: Float64Array,
-  count: number,
-  x: number,
-  n: number,
-  y: number,
-): number {
+/** What {@link insert} adds: x, n, y. It takes them from here because doubles handed to a function may be boxed. */
+const ENTRY = new Float64Array(3);
+
+/** Adds the counts of {@link ENTRY} to rows sorted by x; returns the number of rows. */
+function insert(xs: Float64Array, ns: Float64Array, ys: Float64Array, count: number): number {
+  const x = ENTRY[0] as number;
   let at = count;
   while (at > 0 && (xs[at - 1] as number) > x) at -= 1;
   if (at > 0 && xs[at - 1] === x) {
-    ns[at - 1] = (ns[at - 1] as number) + n;
-    ys[at - 1] = (ys[at - 1] as number) + y;
+    ns[at - 1] = (ns[at - 1] as number) + (ENTRY[1] as number);
+    ys[at - 1] = (ys[at - 1] as number) + (ENTRY[2] as number);
     return count;
   }
   for (let i = count; i > at; i -= 1) {
@@ -260,7 +269,7 @@ function insert(
     ys[i] = ys[i - 1] as number;
   }
   xs[at] = x;
-  ns[at] = n;
-  ys[at] = y;
+  ns[at] = ENTRY[1] as number;
+  ys[at] = ENTRY[2] as number;
   return count + 1;
 }

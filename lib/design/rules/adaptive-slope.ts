@@ -2,7 +2,7 @@ import type { SettingsOf } from '@/lib/schemas/design';
 import { computed, exact, probability, type TraceLine } from '../trace/line';
 import { RULE, type TrialState } from '../trial-state';
 import { differenceLine, givenLine, observedLine, startLines } from './lines';
-import { startingValue, statusOf, type Rule, type StepContext } from './rule';
+import { enterStart, statusOfNext, type Rule, type StepContext } from './rule';
 
 const SOURCE = 'Lai & Robbins (1979), Ann. Stat. 7:1196–1221; Anbar (1978)';
 
@@ -42,17 +42,16 @@ export const adaptiveSlope: Rule<'adaptive-slope'> = {
     const slope = r[ADAPTIVE.USED] as number;
     r[RULE.INDEX] = index;
     r[RULE.GAIN] = 1 / (index * slope);
-    let next: number;
     if (settings.form === 'last') {
-      const from = startingValue(settings.carry, sign, trial);
-      r[RULE.FROM] = from;
-      next = from - ((trial.proportion[last] as number) - target) / (index * slope);
+      enterStart(settings.carry, sign, trial);
+      const error = (trial.proportion[last] as number) - target;
+      r[RULE.NEXT] = (r[RULE.FROM] as number) - error / (index * slope);
     } else {
+      const error = (r[ADAPTIVE.MEAN_PROPORTION] as number) - target;
       r[RULE.FROM] = r[ADAPTIVE.MEAN_DOSE] as number;
-      next = (r[ADAPTIVE.MEAN_DOSE] as number) - ((r[ADAPTIVE.MEAN_PROPORTION] as number) - target) / slope;
+      r[RULE.NEXT] = (r[ADAPTIVE.MEAN_DOSE] as number) - error / slope;
     }
-    r[RULE.NEXT] = next;
-    return statusOf(next);
+    return statusOfNext(trial);
   },
   explain(context, trial) {
     return [

@@ -3,7 +3,7 @@ import { owensT } from '../distributions/owens-t';
 import { computed, exact, probability, signed, type TraceLine } from '../trace/line';
 import { RULE, type TrialState } from '../trial-state';
 import { observedLine, startLines } from './lines';
-import { startingValue, statusOf, type Rule, type StepContext } from './rule';
+import { enterStart, statusOfNext, type Rule, type StepContext } from './rule';
 
 const SOURCE = 'Joseph (2004), Biometrika 91:461–470';
 const COHORT_SOURCE = `${SOURCE}; extended to cohorts by the best linear update under the same model`;
@@ -35,34 +35,20 @@ export const joseph: Rule<'joseph'> = {
     trial.rule[RULE.X] = x1;
     trial.rule[JOSEPH.TAU2] = settings.priorSd * settings.priorSd;
   },
-  step({ settings, target, sign }, trial) {
+  step(context, trial) {
     const r = trial.rule;
-    const m = trial.size[trial.steps - 1] as number;
     const tau2 = r[JOSEPH.TAU2] as number;
-    const beta = settings.slope;
-    const ratio = beta * beta * tau2;
-    const spread = Math.sqrt(1 + ratio);
-    const h = normalQuantile(target) / spread;
-    const b = normalCdf(h);
-    const covariance = (beta * tau2 * normalDensity(h)) / spread;
-    let variance = b * (1 - b);
-    if (m > 1) {
-      const square = b - 2 * owensT(h, 1 / Math.sqrt(1 + 2 * ratio));
-      variance = (variance + (m - 1) * (square - b * b)) / m;
-    }
-    const gain = covariance / variance;
-    const from = startingValue('iterate', sign, trial);
-    const next = from - gain * ((trial.proportion[trial.steps - 1] as number) - b);
+    enterMoments(context, trial);
+    const covariance = r[JOSEPH.COVARIANCE] as number;
+    const gain = covariance / (r[JOSEPH.VARIANCE] as number);
+    const error = (trial.proportion[trial.steps - 1] as number) - (r[JOSEPH.EXPECTED] as number);
+    enterStart('iterate', context.sign, trial);
     r[JOSEPH.TAU2_BEFORE] = tau2;
-    r[JOSEPH.EXPECTED] = b;
-    r[JOSEPH.COVARIANCE] = covariance;
-    r[JOSEPH.VARIANCE] = variance;
     r[JOSEPH.TAU2] = tau2 - covariance * gain;
     r[RULE.INDEX] = (r[RULE.INDEX] as number) + 1;
     r[RULE.GAIN] = gain;
-    r[RULE.FROM] = from;
-    r[RULE.NEXT] = next;
-    return statusOf(next);
+    r[RULE.NEXT] = (r[RULE.FROM] as number) - gain * error;
+    return statusOfNext(trial);
   },
   explain(context, trial) {
     return [observedLine(trial), ...startLines(context, 'iterate', trial), ...gainLines(context, trial)];
@@ -74,6 +60,46 @@ export const joseph: Rule<'joseph'> = {
     priorVariance: trial.rule[JOSEPH.TAU2] as number,
   }),
 };
+
+/** Numbers remembered of a step: what the moments depend on (τ², m, β_P, Γ), then b, C and V. */
+const REMEMBERED = 7;
+
+/**
+ * Puts b_k, C_k and V_k into the registers. They depend on no outcome, only on τ² and m, so that a simulator meets the same
+ * ones trial after trial: each step's last are remembered in the trial's state and used again where all they depend on agrees.
+ */
+function enterMoments(context: StepContext<{ slope: number }>, trial: TrialState): void {
+  const { target } = context;
+  const beta = context.settings.slope;
+  const r = trial.rule;
+  const m = trial.size[trial.steps - 1] as number;
+  const tau2 = r[JOSEPH.TAU2] as number;
+  const memory = trial.remembered(REMEMBERED);
+  const at = (trial.steps - 1) * REMEMBERED;
+  const known =
+    memory[at] === tau2 && memory[at + 1] === m && memory[at + 2] === beta && memory[at + 3] === target;
+  if (!known) {
+    const ratio = beta * beta * tau2;
+    const spread = Math.sqrt(1 + ratio);
+    const h = normalQuantile(target) / spread;
+    const b = normalCdf(h);
+    let variance = b * (1 - b);
+    if (m > 1) {
+      const square = b - 2 * owensT(h, 1 / Math.sqrt(1 + 2 * ratio));
+      variance = (variance + (m - 1) * (square - b * b)) / m;
+    }
+    memory[at] = tau2;
+    memory[at + 1] = m;
+    memory[at + 2] = beta;
+    memory[at + 3] = target;
+    memory[at + 4] = b;
+    memory[at + 5] = (beta * tau2 * normalDensity(h)) / spread;
+    memory[at + 6] = variance;
+  }
+  r[JOSEPH.EXPECTED] = memory[at + 4] as number;
+  r[JOSEPH.COVARIANCE] = memory[at + 5] as number;
+  r[JOSEPH.VARIANCE] = memory[at + 6] as number;
+}
 
 function gainLines(
   { settings, target, sign }: StepContext<{ slope: number }>,

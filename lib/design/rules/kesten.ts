@@ -1,8 +1,8 @@
 import { RULE, type TrialState } from '../trial-state';
 import { computed, exact, type TraceLine } from '../trace/line';
 import { differenceLine, gainLine, moveLine, observedLine, startLines } from './lines';
-import { gainAt } from './robbins-monro';
-import { startingValue, statusOf, type Rule } from './rule';
+import { enterGain, enterMove } from './robbins-monro';
+import { enterStart, statusOfNext, type Rule } from './rule';
 
 const SOURCE = 'Kesten (1958), Ann. Math. Stat. 29:41–59';
 
@@ -30,25 +30,21 @@ export const kesten: Rule<'kesten'> = {
     trial.rule.fill(0);
     trial.rule[RULE.X] = x1;
   },
-  step({ settings, target, sign }, trial) {
+  step(context, trial) {
     const r = trial.rule;
     const count = (r[COUNT] as number) + 1;
     const changed = (r[LAST] as number) * (r[BEFORE_LAST] as number) <= 0;
     const index = count <= 2 ? count : (r[RULE.INDEX] as number) + (changed ? 1 : 0);
-    const error = (trial.proportion[trial.steps - 1] as number) - target;
-    const from = startingValue(settings.carry, sign, trial);
-    const gain = gainAt(settings, index);
     r[COUNT] = count;
     r[USED_LAST] = r[LAST] as number;
     r[USED_BEFORE] = r[BEFORE_LAST] as number;
     r[BEFORE_LAST] = r[LAST] as number;
-    r[LAST] = error;
+    r[LAST] = (trial.proportion[trial.steps - 1] as number) - context.target;
     r[RULE.INDEX] = index;
-    r[RULE.GAIN] = gain;
-    r[RULE.FROM] = from;
-    const next = from - gain * error;
-    r[RULE.NEXT] = next;
-    return statusOf(next);
+    enterGain(context.settings, trial);
+    enterStart(context.settings.carry, context.sign, trial);
+    enterMove(context, trial);
+    return statusOfNext(trial);
   },
   explain(context, trial) {
     return [

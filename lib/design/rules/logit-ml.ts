@@ -3,7 +3,7 @@ import { logit } from '../distributions/logistic';
 import { computed, exact, type TraceLine } from '../trace/line';
 import { RULE, type TrialState } from '../trial-state';
 import { differenceLine, givenLine, observedLine } from './lines';
-import { STEP, statusOf, type Rule, type StepContext, type StepStatus } from './rule';
+import { STEP, statusOfNext, type Rule, type StepContext, type StepStatus } from './rule';
 
 const SOURCE = 'Wu (1985), J. Am. Stat. Assoc. 80:974–984';
 const FIRTH_SOURCE = `${SOURCE}; penalty of Firth (1993), Biometrika 80:27–38`;
@@ -53,9 +53,11 @@ export const logitMl: Rule<'logit-ml'> = {
     r[RULE.INDEX] = trial.steps;
     r[RULE.GAIN] = settings.c / trial.steps;
     r[RULE.FROM] = given;
-    const next = unlimited < lowest ? lowest : unlimited > highest ? highest : unlimited;
-    r[RULE.NEXT] = next;
-    return Number.isFinite(unlimited) ? statusOf(next) : statusOf(unlimited);
+    r[RULE.NEXT] = unlimited;
+    const finite = statusOfNext(trial);
+    if (finite !== STEP.done) return finite;
+    r[RULE.NEXT] = unlimited < lowest ? lowest : unlimited > highest ? highest : unlimited;
+    return statusOfNext(trial);
   },
   explain(context, trial) {
     return [

@@ -1,13 +1,27 @@
-import type { SettingsOf } from '@/lib/schemas/design';
-import { RULE } from '../trial-state';
+import { RULE, type TrialState } from '../trial-state';
 import { differenceLine, gainLine, moveLine, observedLine, startLines } from './lines';
-import { startingValue, statusOf, type Rule } from './rule';
+import { enterStart, statusOfNext, type Rule } from './rule';
 
 const SOURCE = 'Robbins & Monro (1951), Ann. Math. Stat. 22:400–407';
 
+type GainSettings = { readonly c: number; readonly k0: number; readonly gamma: number };
+
 /** a = c/(index + k0)^γ, in working-scale units per unit of probability. */
-export function gainAt(settings: { c: number; k0: number; gamma: number }, index: number): number {
+export function gainAt(settings: GainSettings, index: number): number {
   return settings.c / Math.pow(index + settings.k0, settings.gamma);
+}
+
+/** a_k of the index in its register into that of the gain. */
+export function enterGain(settings: GainSettings, trial: TrialState): void {
+  const r = trial.rule;
+  r[RULE.GAIN] = settings.c / Math.pow((r[RULE.INDEX] as number) + settings.k0, settings.gamma);
+}
+
+/** x_{k+1} = f_k − a_k e_k from the registers of f_k and a_k into that of the next value. */
+export function enterMove(context: { readonly target: number }, trial: TrialState): void {
+  const r = trial.rule;
+  const error = (trial.proportion[trial.steps - 1] as number) - context.target;
+  r[RULE.NEXT] = (r[RULE.FROM] as number) - (r[RULE.GAIN] as number) * error;
 }
 
 /** Robbins & Monro 1951: x_{k+1} = f_k − a_k e_k, a_k = c/(k + k0)^γ. */
@@ -24,17 +38,12 @@ export const robbinsMonro: Rule<'robbins-monro'> = {
     trial.rule.fill(0);
     trial.rule[RULE.X] = x1;
   },
-  step({ settings, target, sign }, trial) {
-    const r = trial.rule;
-    const index = (r[RULE.INDEX] as number) + 1;
-    const gain = gainAt(settings, index);
-    const from = startingValue(settings.carry, sign, trial);
-    r[RULE.INDEX] = index;
-    r[RULE.GAIN] = gain;
-    r[RULE.FROM] = from;
-    const next = from - gain * ((trial.proportion[trial.steps - 1] as number) - target);
-    r[RULE.NEXT] = next;
-    return statusOf(next);
+  step(context, trial) {
+    trial.rule[RULE.INDEX] = (trial.rule[RULE.INDEX] as number) + 1;
+    enterGain(context.settings, trial);
+    enterStart(context.settings.carry, context.sign, trial);
+    enterMove(context, trial);
+    return statusOfNext(trial);
   },
   explain(context, trial) {
     return [
@@ -47,5 +56,3 @@ export const robbinsMonro: Rule<'robbins-monro'> = {
   },
   numbers: (trial) => ({ index: trial.rule[RULE.INDEX] as number, gain: trial.rule[RULE.GAIN] as number }),
 };
-
-export type RobbinsMonroSettings = SettingsOf<'robbins-monro'>;

@@ -11,7 +11,7 @@ export interface StepContext<Settings> {
   readonly settings: Settings;
   /** Γ. */
   readonly target: number;
-  /** s: +1 rising, −1 falling. A rule computes on s·x; only {@link startingValue} compares real doses. */
+  /** s: +1 rising, −1 falling. A rule computes on s·x; only {@link enterStart} compares real doses. */
   readonly sign: 1 | -1;
 }
 
@@ -55,19 +55,20 @@ export interface AnyRule {
 }
 
 /**
- * f_k, the value a step starts from: x_k (`iterate`) or x̃_k (`given`). Where the signed dose was below the recommended
- * one, `iterate` starts from the lower of the two, as real doses for both signs.
+ * Puts f_k, the value a step starts from, into `RULE.FROM`: x_k (`iterate`) or x̃_k (`given`). Where the signed dose was below
+ * the recommended one, `iterate` starts from the lower of the two, as real doses for both signs.
  */
-export function startingValue(carry: 'iterate' | 'given', sign: 1 | -1, trial: TrialState): number {
+export function enterStart(carry: 'iterate' | 'given', sign: 1 | -1, trial: TrialState): void {
   const given = trial.given[trial.steps - 1] as number;
-  if (carry === 'given') return given;
   const x = trial.rule[RULE.X] as number;
-  if (!trial.lowered) return x;
-  return sign > 0 ? Math.min(x, given) : Math.max(x, given);
+  let from = carry === 'given' ? given : x;
+  if (carry === 'iterate' && trial.lowered) from = sign > 0 ? Math.min(x, given) : Math.max(x, given);
+  trial.rule[RULE.FROM] = from;
 }
 
-/** The status of a raw value: overflow and NaN are never carried on. */
-export function statusOf(value: number): StepStatus {
-  if (Number.isNaN(value)) return STEP.notANumber;
-  return Number.isFinite(value) ? STEP.done : STEP.overflow;
+/** The status of the raw value in `RULE.NEXT`: overflow and NaN are never carried on. */
+export function statusOfNext(trial: TrialState): StepStatus {
+  const next = trial.rule[RULE.NEXT] as number;
+  if (Number.isFinite(next)) return STEP.done;
+  return Number.isNaN(next) ? STEP.notANumber : STEP.overflow;
 }

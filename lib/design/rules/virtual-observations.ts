@@ -2,7 +2,7 @@ import type { SettingsOf } from '@/lib/schemas/design';
 import { computed, exact, probability, type TraceLine } from '../trace/line';
 import { RULE, type TrialState } from '../trial-state';
 import { differenceLine, givenLine, observedLine } from './lines';
-import { statusOf, type Rule, type StepContext } from './rule';
+import { statusOfNext, type Rule, type StepContext } from './rule';
 
 const SOURCE = 'Cheung & Elkind (2010), Biometrika 97:109–121';
 const MEAN_DOSE = RULE.OWN;
@@ -42,12 +42,11 @@ export const virtualObservations: Rule<'virtual-observations'> = {
     r[RULE.INDEX] = k;
     r[RULE.FROM] = r[RULE.X] as number;
     r[RULE.GAIN] = 1 / (k * settings.slope);
-    const next =
+    r[RULE.NEXT] =
       settings.carryBounds === null
         ? meanDose - (meanProportion - target) / settings.slope
         : boundedRecursion(settings, target, sign, trial);
-    r[RULE.NEXT] = next;
-    return statusOf(next);
+    return statusOfNext(trial);
   },
   explain(context, trial) {
     return [

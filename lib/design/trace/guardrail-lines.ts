@@ -107,7 +107,10 @@ function projectionLine(compiled: CompiledDesign, trial: TrialState): TraceLine 
   const ends =
     compiled.design.guardrails.projection === null
       ? { low: doseAt(compiled, 0), high: doseAt(compiled, compiled.doses.count - 1) }
-      : { low: workingDose(compiled, compiled.lowest), high: workingDose(compiled, compiled.highest) };
+      : {
+          low: workingDose(compiled, compiled.bounds.lowest),
+          high: workingDose(compiled, compiled.bounds.highest),
+        };
   return {
     id: 'projection',
     step: 3,
