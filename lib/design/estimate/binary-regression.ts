@@ -51,6 +51,9 @@ export class BinaryRegression {
   /** Whether a maximum exists, as found by the last maximum-likelihood fit (or {@link existence}). */
   status: ExistenceStatus = 'no-data';
 
+  /** Where the objective is evaluated: fields, because doubles handed to a function may be boxed. */
+  private a = 0;
+  private b = 0;
   private centre = 0;
   private scale = 1;
   private objective = 0;
@@ -154,7 +157,9 @@ export class BinaryRegression {
     }
     let a = linkFunction(this.link, (responses + 0.5) / (total + 1));
     let b = 0;
-    this.evaluate(a, b, firth);
+    this.a = a;
+    this.b = b;
+    this.evaluate(firth);
     let settled = false;
     while (!settled && this.iterations < MAX_ITERATIONS) {
       this.iterations++;
@@ -167,10 +172,14 @@ export class BinaryRegression {
       const before = this.objective;
       const slack = 1e-12 * (1 + Math.abs(before));
       let fraction = 1;
-      this.evaluate(a + d0, b + d1, firth);
+      this.a = a + d0;
+      this.b = b + d1;
+      this.evaluate(firth);
       while (!(this.objective >= before - slack) && fraction > 1e-9) {
         fraction /= 2;
-        this.evaluate(a + fraction * d0, b + fraction * d1, firth);
+        this.a = a + fraction * d0;
+        this.b = b + fraction * d1;
+        this.evaluate(firth);
       }
       a += fraction * d0;
       b += fraction * d1;
@@ -224,7 +233,9 @@ export class BinaryRegression {
   }
 
   /** Objective, its gradient, its negative Hessian and the expected information at (a, b) on the standardised dose. */
-  private evaluate(a: number, b: number, firth: boolean): void {
+  private evaluate(firth: boolean): void {
+    const a = this.a;
+    const b = this.b;
     let objective = 0;
     let g0 = 0;
     let g1 = 0;
