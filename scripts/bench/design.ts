@@ -3,7 +3,7 @@ import { compileDesign, newTrial, startTrial, type CompiledDesign } from '@/lib/
 import type { CohortHistory } from '@/lib/design/history';
 import { openStream } from '@/lib/design/random/streams';
 import { recommend } from '@/lib/design/recommend';
-import { completeCohort } from '@/lib/design/step';
+import { completeCohortAt } from '@/lib/design/step';
 import { PLACE } from '@/lib/design/trial-state';
 import { designSchema, type Design, type RuleSettings } from '@/lib/schemas/design';
 import { designDefaults } from '@/lib/schemas/design-defaults';
@@ -97,15 +97,14 @@ function runTrials(compiled: CompiledDesign, draws: Float64Array, trials: number
     for (let k = 0; k < COHORTS; k++) {
       const level = trial.place[PLACE.FINAL] as number;
       if (level < 0) break;
-      const x = compiled.doses.working(level);
       let responses = 0;
       for (let i = 0; i < cohortSize; i++) {
         if ((draws[at] as number) <= 0.05 + 0.09 * level) responses++;
         at = at + 1 === draws.length ? 0 : at + 1;
       }
       trial.beginCohort();
-      trial.addSubjects(x, cohortSize, responses);
-      completeCohort(compiled, trial, x, false);
+      trial.addSubjectsAt(compiled.doses.workings, level, cohortSize, responses);
+      completeCohortAt(compiled, trial, level, false);
       steps++;
     }
   }
@@ -115,13 +114,13 @@ function runTrials(compiled: CompiledDesign, draws: Float64Array, trials: number
 function timeStep(compiled: CompiledDesign): { microseconds: number; bytes: number } {
   const stream = openStream(21, 0);
   const draws = Float64Array.from({ length: 8191 }, () => stream.uniform());
-  runTrials(compiled, draws, 2000);
+  runTrials(compiled, draws, 5000);
   let microseconds = Infinity;
   let bytes = Infinity;
-  for (let round = 0; round < 5; round++) {
+  for (let round = 0; round < 25; round++) {
     const heap = process.memoryUsage().heapUsed;
     const start = performance.now();
-    const steps = runTrials(compiled, draws, 1000);
+    const steps = runTrials(compiled, draws, 200);
     const time = performance.now() - start;
     const grown = process.memoryUsage().heapUsed - heap;
     microseconds = Math.min(microseconds, (1000 * time) / steps);
