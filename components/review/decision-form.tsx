@@ -89,7 +89,9 @@ export function DecisionForm({
           By signing, {printedName} states: “{words.meaning}”
         </p>
       ) : null}
-      <SubmitButton pendingLabel="Signing…">{words?.button ?? 'Sign'}</SubmitButton>
+      <div>
+        <SubmitButton pendingLabel="Signing…">{words?.button ?? 'Sign'}</SubmitButton>
+      </div>
     </ActionForm>
   );
 }

@@ -71,9 +71,11 @@ export function LiftForm({
       <p className="max-w-prose">
         By signing, {printedName} states: “I lift the halt of {trialCode}; {words}.”
       </p>
-      <SubmitButton pendingLabel="Signing…">
-        {count >= quorum ? 'Sign and lift the halt' : `Sign to lift the halt (${count} of ${quorum})`}
-      </SubmitButton>
+      <div>
+        <SubmitButton pendingLabel="Signing…">
+          {count >= quorum ? 'Sign and lift the halt' : `Sign to lift the halt (${count} of ${quorum})`}
+        </SubmitButton>
+      </div>
     </ActionForm>
   );
 }

@@ -31,7 +31,6 @@ export function NextSteps({
   const steps = ahead.value?.steps ?? [];
   return (
     <div>
-      <h3 className="mb-2.5 text-lg">What would follow from {doseText(design, dose)}</h3>
       <StaticTable
         caption={`Next dose for each number of responses in cohort ${number}`}
         columns={[

@@ -96,6 +96,16 @@ export interface ReviewView {
   readonly lift: LiftView | null;
   /** What is going on when nothing waits for signatures. */
   readonly idle: string | null;
+  /** The last dose released, with the signatures that released it; null before the first. */
+  readonly lastRelease: LastRelease | null;
+}
+
+/** A release and who signed it. */
+export interface LastRelease {
+  readonly cohortNumber: number;
+  readonly dose: string;
+  readonly releasedAt: string;
+  readonly signatures: readonly StandingSignature[];
 }
 
 function standing(signature: Signature): StandingSignature {
@@ -205,6 +215,20 @@ function liftOf(trial: ReaderTrial): LiftView | null {
   };
 }
 
+function lastReleaseOf(trial: ReaderTrial): LastRelease | null {
+  const { state } = trial.loaded;
+  const release = Object.values(state.releases).sort((a, b) => b.cohortNumber - a.cohortNumber)[0];
+  const recommendation = release && state.recommendations[release.recommendationId];
+  const version = recommendation && state.designVersions[recommendation.designVersionId];
+  if (!release || !version) return null;
+  return {
+    cohortNumber: release.cohortNumber,
+    dose: doseText(version.design, release.dose),
+    releasedAt: release.releasedAt,
+    signatures: standingSignatures(state, release.recommendationId).map(standing),
+  };
+}
+
 function idleOf(trial: ReaderTrial): string {
   const { state } = trial.loaded;
   const cohort = currentCohort(state);
@@ -237,5 +261,6 @@ export async function reviewPage(reader: TrialReader, code: string): Promise<Rev
     packet,
     lift,
     idle: packet === null && lift === null ? idleOf(trial) : null,
+    lastRelease: lastReleaseOf(trial),
   };
 }

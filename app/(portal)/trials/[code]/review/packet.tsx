@@ -67,6 +67,7 @@ export function Packet({
   const last = packet.history.at(-1);
   const responses = last?.subjects.filter((subject) => subject.response).length ?? 0;
   const isStop = outcome === 'stop' || dose === null;
+  const reached = isStop ? 'How the stop was reached' : `How ${doseText(design, dose)} was reached`;
   const { decisions, lowerDoses } = offeredDecisions(packet, trial.quorum);
   return (
     <>
@@ -83,16 +84,16 @@ export function Packet({
           <SubjectTable packet={packet} />
         </Section>
       ) : null}
-      <Section title={isStop ? 'How the stop was reached' : `How ${doseText(design, dose)} was reached`}>
-        <TwoColumns>
-          <TraceTable
-            lines={packet.lines}
-            context={printContext(design)}
-            caption={isStop ? 'How the stop was reached' : `How ${doseText(design, dose)} was reached`}
-          />
-          {isStop ? null : <NextSteps design={design} history={packet.history} dose={dose} number={number} />}
-        </TwoColumns>
-      </Section>
+      <TwoColumns>
+        <Section title={reached}>
+          <TraceTable lines={packet.lines} context={printContext(design)} caption={reached} />
+        </Section>
+        {isStop ? null : (
+          <Section title={`What would follow from ${doseText(design, dose)}`}>
+            <NextSteps design={design} history={packet.history} dose={dose} number={number} />
+          </Section>
+        )}
+      </TwoColumns>
       <Section title="Your decision" raised id="decision">
         {packet.sign === null ? (
           <p>

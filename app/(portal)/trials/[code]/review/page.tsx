@@ -2,6 +2,7 @@ import type { Metadata } from 'next';
 import { notFound } from 'next/navigation';
 import { Caution } from '@/components/caution/caution';
 import { PageTitle } from '@/components/layout/page-title';
+import { Section } from '@/components/layout/section';
 import { MarginNote, Sheet } from '@/components/layout/sheet';
 import { EmptyState } from '@/components/ui/empty-state';
 import { TimeInZone } from '@/components/ui/time-in-zone';
@@ -25,6 +26,18 @@ export default async function ReviewPage({ params }: { params: Promise<{ code: s
         <>
           <PageTitle>Review</PageTitle>
           <EmptyState title="Nothing waits for signatures">{view.idle}</EmptyState>
+          {view.lastRelease ? (
+            <Section title={`${view.lastRelease.dose} released for cohort ${view.lastRelease.cohortNumber}`}>
+              <p className="mb-3 text-ink-soft">
+                The last decision, on <TimeInZone at={view.lastRelease.releasedAt} zone="UTC" />.
+              </p>
+              <div className="grid gap-3">
+                {view.lastRelease.signatures.map((signature) => (
+                  <Signed key={signature.printedName} signature={signature} />
+                ))}
+              </div>
+            </Section>
+          ) : null}
         </>
       ) : null}
     </Sheet>
