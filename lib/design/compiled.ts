@@ -6,6 +6,9 @@ import type { AnyRule, StepContext } from './rules/rule';
 import { signOf, toWorking } from './scale';
 import { PLACE, TrialState } from './trial-state';
 
+/** Places in {@link CompiledDesign.bounds}. */
+export const BOUND = { RISE_TIMES: 0, RISE_ADD: 1, LOWEST: 2, HIGHEST: 3 } as const;
+
 /** A design made ready for steps: doses by index, numbers on the working scale, the rule bound to its settings. */
 export interface CompiledDesign {
   readonly design: Design;
@@ -18,13 +21,8 @@ export interface CompiledDesign {
   /** w(starting dose). */
   readonly start: number;
   readonly startIndex: number;
-  /** Steps 2 and 3: x ≤ g × riseTimes + riseAdd, and the projection to [lowest, highest]. */
-  readonly bounds: {
-    readonly riseTimes: number;
-    readonly riseAdd: number;
-    readonly lowest: number;
-    readonly highest: number;
-  };
+  /** Steps 2 and 3 by {@link BOUND}: x ≤ g × times + add, and the projection to [lowest, highest]. */
+  readonly bounds: Float64Array;
   readonly tiesHigher: boolean;
   readonly closing: ClosingCriterion | null;
 }
@@ -47,11 +45,11 @@ export function compileDesign(design: Design): CompiledDesign {
     target: design.target,
     start: doses.working(startIndex),
     startIndex,
-    bounds: {
+    bounds: Float64Array.of(
       ...riseOf(design),
-      lowest: projection?.lowest ?? doses.working(0),
-      highest: projection?.highest ?? doses.working(doses.count - 1),
-    },
+      projection?.lowest ?? doses.working(0),
+      projection?.highest ?? doses.working(doses.count - 1),
+    ),
     tiesHigher: design.guardrails.ties === 'higher',
     closing: closing === null ? null : new ClosingCriterion(closing, design.target),
   };
@@ -83,14 +81,12 @@ export function startRule(compiled: CompiledDesign, trial: TrialState, x1: numbe
   compiled.rule.initialise(compiled.design.rule, compiled.sign * x1, trial);
 }
 
-/** Step 2 as g ↦ g × times + add; without a bound the result is infinite. */
-function riseOf({ guardrails, scale }: Design): { riseTimes: number; riseAdd: number } {
+/** Step 2 as g ↦ g × times + add, [times, add]; without a bound the result is infinite. */
+function riseOf({ guardrails, scale }: Design): [times: number, add: number] {
   const rise = guardrails.largestRise;
-  if (rise === null) return { riseTimes: 1, riseAdd: Infinity };
-  if (rise.kind === 'step') return { riseTimes: 1, riseAdd: rise.step };
-  return scale === 'log'
-    ? { riseTimes: 1, riseAdd: Math.log(rise.factor) }
-    : { riseTimes: rise.factor, riseAdd: 0 };
+  if (rise === null) return [1, Infinity];
+  if (rise.kind === 'step') return [1, rise.step];
+  return scale === 'log' ? [1, Math.log(rise.factor)] : [rise.factor, 0];
 }
 
 /** w(d) of a dose on this design's scale. */

@@ -1,5 +1,5 @@
 import { closeDoses } from './close-doses';
-import type { CompiledDesign } from './compiled';
+import { BOUND, type CompiledDesign } from './compiled';
 import { highestAtMost, nearestIndexAt, TIE_SHARE } from './dose-set';
 import { STEP, type StepStatus } from './rules/rule';
 import { judgeStop } from './stopping';
@@ -93,9 +93,13 @@ function record(compiled: CompiledDesign, trial: TrialState, lowered: boolean): 
 /** Steps 2 and 3: from the raw value to the projected one. */
 function boundValue(compiled: CompiledDesign, trial: TrialState): void {
   const { guard, rule } = trial;
-  const { riseAdd, riseTimes, lowest, highest } = compiled.bounds;
+  const { bounds } = compiled;
+  const lowest = bounds[BOUND.LOWEST] as number;
+  const highest = bounds[BOUND.HIGHEST] as number;
   const raw = compiled.sign * (rule[RULE.NEXT] as number);
-  const bound = (guard[GUARD.LOWER] as number) * riseTimes + riseAdd;
+  const bound =
+    (guard[GUARD.LOWER] as number) * (bounds[BOUND.RISE_TIMES] as number) +
+    (bounds[BOUND.RISE_ADD] as number);
   const afterRise = raw > bound ? bound : raw;
   const projected = afterRise < lowest ? lowest : afterRise > highest ? highest : afterRise;
   guard[GUARD.RAW] = raw;

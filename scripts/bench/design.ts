@@ -4,7 +4,7 @@ import type { CohortHistory } from '@/lib/design/history';
 import { openStream } from '@/lib/design/random/streams';
 import { recommend } from '@/lib/design/recommend';
 import { completeCohortAt } from '@/lib/design/step';
-import { PLACE } from '@/lib/design/trial-state';
+import { PLACE, type TrialState } from '@/lib/design/trial-state';
 import { designSchema, type Design, type RuleSettings } from '@/lib/schemas/design';
 import { designDefaults } from '@/lib/schemas/design-defaults';
 
@@ -86,41 +86,46 @@ function timeRecommendation(design: Design): { median: number; p95: number } {
   return { median: times[500] as number, p95: times[950] as number };
 }
 
-/** Runs whole trials without trace; responses come from a table drawn beforehand, so that only steps are timed. */
-function runTrials(compiled: CompiledDesign, draws: Float64Array, trials: number): number {
-  const trial = newTrial(compiled);
+/** Runs one trial without trace; responses come from a table drawn beforehand, so that only steps are timed. */
+function runTrial(compiled: CompiledDesign, trial: TrialState, draws: Float64Array, number: number): void {
   const { cohortSize } = compiled.design;
-  let steps = 0;
-  let at = 0;
-  for (let t = 0; t < trials; t++) {
-    startTrial(compiled, trial);
-    for (let k = 0; k < COHORTS; k++) {
-      const level = trial.place[PLACE.FINAL] as number;
-      if (level < 0) break;
-      let responses = 0;
-      for (let i = 0; i < cohortSize; i++) {
-        if ((draws[at] as number) <= 0.05 + 0.09 * level) responses++;
-        at = at + 1 === draws.length ? 0 : at + 1;
-      }
-      trial.beginCohort();
-      trial.addSubjectsAt(compiled.doses.workings, level, cohortSize, responses);
-      completeCohortAt(compiled, trial, level, false);
-      steps++;
+  const { workings } = compiled.doses;
+  let at = (number * 7919) % draws.length;
+  startTrial(compiled, trial);
+  for (let k = 0; k < COHORTS; k++) {
+    const level = trial.place[PLACE.FINAL] as number;
+    if (level < 0) break;
+    let responses = 0;
+    for (let i = 0; i < cohortSize; i++) {
+      if ((draws[at] as number) <= 0.05 + 0.09 * level) responses++;
+      at = at + 1 === draws.length ? 0 : at + 1;
     }
+    trial.beginCohort();
+    trial.addSubjectsAt(workings, level, cohortSize, responses);
+    completeCohortAt(compiled, trial, level, false);
   }
-  return steps;
 }
 
 function timeStep(compiled: CompiledDesign): { microseconds: number; bytes: number } {
   const stream = openStream(21, 0);
   const draws = Float64Array.from({ length: 8191 }, () => stream.uniform());
-  runTrials(compiled, draws, 5000);
+  const trial = newTrial(compiled);
+  const trials = 200;
+  const round = () => {
+    let steps = 0;
+    for (let t = 0; t < trials; t++) {
+      runTrial(compiled, trial, draws, t);
+      steps += trial.steps;
+    }
+    return steps;
+  };
+  for (let i = 0; i < 50; i++) round();
   let microseconds = Infinity;
   let bytes = Infinity;
-  for (let round = 0; round < 25; round++) {
+  for (let i = 0; i < 50; i++) {
     const heap = process.memoryUsage().heapUsed;
     const start = performance.now();
-    const steps = runTrials(compiled, draws, 200);
+    const steps = round();
     const time = performance.now() - start;
     const grown = process.memoryUsage().heapUsed - heap;
     microseconds = Math.min(microseconds, (1000 * time) / steps);

@@ -1,4 +1,4 @@
-import type { CompiledDesign } from '../compiled';
+import { BOUND, type CompiledDesign } from '../compiled';
 import { isTie, midpoint } from '../dose-set';
 import { exceedanceProbability } from '../estimate/exceedance';
 import { fromWorking } from '../scale';
@@ -108,8 +108,8 @@ function projectionLine(compiled: CompiledDesign, trial: TrialState): TraceLine 
     compiled.design.guardrails.projection === null
       ? { low: doseAt(compiled, 0), high: doseAt(compiled, compiled.doses.count - 1) }
       : {
-          low: workingDose(compiled, compiled.bounds.lowest),
-          high: workingDose(compiled, compiled.bounds.highest),
+          low: workingDose(compiled, compiled.bounds[BOUND.LOWEST] as number),
+          high: workingDose(compiled, compiled.bounds[BOUND.HIGHEST] as number),
         };
   return {
     id: 'projection',
