@@ -54,11 +54,15 @@ export async function ensureBuild(root, { say, children, log }) {
   if (buildIsCurrent(root, digest)) return;
   say('Building (about half a minute) …');
   rmSync(stampFile(root), { force: true });
-  await run(process.execPath, [path.join(root, 'node_modules/next/dist/bin/next'), 'build'], {
-    cwd: root,
-    env: { ...process.env, NODE_ENV: 'production', NEXT_TELEMETRY_DISABLED: '1' },
-    children,
-    log,
-  });
+  try {
+    await run(process.execPath, [path.join(root, 'node_modules/next/dist/bin/next'), 'build'], {
+      cwd: root,
+      env: { ...process.env, NODE_ENV: 'production', NEXT_TELEMETRY_DISABLED: '1' },
+      children,
+      log,
+    });
+  } catch (error) {
+    throw new Error(`The build failed.${error.tail}`, { cause: error });
+  }
   writeJson(stampFile(root), { sources: digest, builtAt: new Date().toISOString() });
 }

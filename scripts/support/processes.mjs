@@ -1,6 +1,5 @@
 import { spawn } from 'node:child_process';
 import { mkdirSync, openSync, readFileSync, closeSync, renameSync, rmSync, writeFileSync } from 'node:fs';
-import { constants } from 'node:os';
 import path from 'node:path';
 
 /** Pauses for some milliseconds. */
@@ -132,7 +131,7 @@ export function run(command, args, { env = process.env, cwd, log, children } = {
       if (code === 0) return resolve();
       const tail = log ? `\n${readFileSync(log, 'utf8').split('\n').slice(-40).join('\n')}` : '';
       const error = new Error(`${path.basename(command)} ${args[0] ?? ''} failed (${name ?? code}).${tail}`);
-      error.exitCode = code ?? 128 + (constants.signals[name] ?? 0);
+      error.tail = tail;
       reject(error);
     });
   });

@@ -1,0 +1,1 @@
+export function findProgram(name: string): string | null;
