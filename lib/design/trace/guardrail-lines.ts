@@ -49,7 +49,7 @@ function effect(
 /** The lines of steps 2 to 7, one at least for each, read from the registers of the step just made. */
 export function guardrailLines(compiled: CompiledDesign, trial: TrialState): TraceLine[] {
   return [
-    asDoseLine(compiled, trial),
+    ...asDoseLines(compiled, trial),
     riseLine(compiled, trial),
     projectionLine(compiled, trial),
     nearestLine(compiled, trial),
@@ -61,17 +61,20 @@ export function guardrailLines(compiled: CompiledDesign, trial: TrialState): Tra
   ];
 }
 
-function asDoseLine(compiled: CompiledDesign, trial: TrialState): TraceLine {
+/** The raw value as a dose, where the working scale is not the dose itself. */
+function asDoseLines(compiled: CompiledDesign, trial: TrialState): TraceLine[] {
+  if (compiled.design.scale === 'linear') return [];
   const raw = trial.guard[GUARD.RAW] as number;
-  const log = compiled.design.scale === 'log';
-  return {
-    id: 'as-dose',
-    step: 1,
-    formula: log ? 'e^{x}' : '{x}',
-    numbers: { x: computed(raw, 'x') },
-    result: workingDose(compiled, raw),
-    acted: false,
-  };
+  return [
+    {
+      id: 'as-dose',
+      step: 1,
+      formula: 'e^{x}',
+      numbers: { x: computed(raw, 'x') },
+      result: workingDose(compiled, raw),
+      acted: false,
+    },
+  ];
 }
 
 function riseLine(compiled: CompiledDesign, trial: TrialState): TraceLine {
