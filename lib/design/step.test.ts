@@ -104,28 +104,89 @@ describe('exact enumeration through the step', () => {
     });
   }
 
-  // FACTS A6, 16: exact characteristics computed for this project, virtual observations, m = 3, 8 cohorts, target 0.25
-  const truth = [0.05, 0.1, 0.2, 0.3, 0.5];
-  it.each([
-    ['b = 1/8, no cap', 1 / 8, 'off', truth, [0.00655, 0.13767, 0.48546, 0.33822, 0.03211]],
-    ['b = 1/8, no skipping', 1 / 8, 'tried', truth, [0.00605, 0.13899, 0.48894, 0.34211, 0.0239]],
-    ['b = 1/10, no skipping', 1 / 10, 'tried', truth, [0.00591, 0.12122, 0.43223, 0.3944, 0.04624]],
-    ['b = 1/5', 1 / 5, 'tried', truth, [0.011, 0.26616, 0.62827, 0.09457, 0]],
-    ['harmful truth', 1 / 8, 'tried', [0.25, 0.4, 0.5, 0.6, 0.7], [0.80383, 0.17961, 0.01603, 0.00054, 0]],
-  ] as const)('gives the check values: %s', (_name, slope, noSkipping, p, expected) => {
+  // FACTS A6, 16: exact characteristics computed for this project; virtual observations, m = 3, 8 cohorts, target 0.25
+  const virtual = (slope: number, noSkipping: 'off' | 'tried', coherence: 'off' | 'one-way' = 'off') => {
     const base = designDefaults('levels');
-    const design = designSchema.parse({
+    return designSchema.parse({
       ...base,
       scale: 'linear',
       doses: { kind: 'levels', levels: ['1', '2', '3', '4', '5'] },
       startingDose: '1',
       maximumCohorts: 8,
       rule: { name: 'virtual-observations', slope },
-      guardrails: { ...base.guardrails, largestRise: null, noSkipping, coherence: 'off', closing: null },
+      guardrails: { ...base.guardrails, largestRise: null, noSkipping, coherence, closing: null },
       stopping: NO_STOPPING,
     });
-    // "no skipping" of the check values is from the highest level tried
-    const exact = enumerateTrial(design, p);
-    expected.forEach((share, j) => expect(exact.recommended[j + 1]).toBeCloseTo(share, 5));
+  };
+  const truth = [0.05, 0.1, 0.2, 0.3, 0.5];
+  const harmful = [0.25, 0.4, 0.5, 0.6, 0.7];
+  const mild = [0.02, 0.04, 0.08, 0.15, 0.25];
+
+  it.each<[string, number, 'off' | 'tried', number[], number[], number[] | null, number | null]>([
+    [
+      'b = 1/8, no cap',
+      1 / 8,
+      'off',
+      truth,
+      [0.00655, 0.13767, 0.48546, 0.33822, 0.03211],
+      [4.2152, 3.3308, 9.5499, 5.7882, 1.116],
+      4.7483,
+    ],
+    [
+      'b = 1/8, no skipping',
+      1 / 8,
+      'tried',
+      truth,
+      [0.00605, 0.13899, 0.48894, 0.34211, 0.0239],
+      [3.9678, 6.2797, 8.4551, 4.9156, 0.3818],
+      4.1829,
+    ],
+    [
+      'b = 1/10, no skipping',
+      1 / 10,
+      'tried',
+      truth,
+      [0.00591, 0.12122, 0.43223, 0.3944, 0.04624],
+      [3.9786, 5.7577, 7.9831, 5.1593, 1.1213],
+      4.4798,
+    ],
+    [
+      'b = 1/5',
+      1 / 5,
+      'tried',
+      truth,
+      [0.011, 0.26616, 0.62827, 0.09457, 0],
+      [4.5328, 7.8126, 10.8862, 0.7684, 0],
+      3.4157,
+    ],
+    ['b = 1/5, no cap', 1 / 5, 'off', truth, [0.011, 0.26616, 0.62827, 0.09457, 0], null, 3.4157],
+    [
+      'harmful truth',
+      1 / 8,
+      'tried',
+      harmful,
+      [0.80383, 0.17961, 0.01603, 0.00054, 0],
+      [17.2866, 5.6746, 0.9589, 0.0797, 0.0003],
+      7.1189,
+    ],
+    ['mild truth', 1 / 8, 'tried', mild, [0.00006, 0.00571, 0.10899, 0.52165, 0.36359], null, 2.6794],
+  ])('gives the check values: %s', (_name, slope, noSkipping, p, selected, subjects, responses) => {
+    const exact = enumerateTrial(virtual(slope, noSkipping), p);
+    selected.forEach((share, j) => expect(exact.recommended[j + 1]).toBeCloseTo(share, 5));
+    subjects?.forEach((n, j) => expect(exact.subjectsByLevel[j]).toBeCloseTo(n, 3));
+    const expected = exact.responsesByLevel.reduce((sum, y) => sum + y, 0);
+    if (responses !== null) expect(expected).toBeCloseTo(responses, 3);
+  });
+
+  it('never selects the top level with b = 1/5 even where it is the right one', () => {
+    expect(enumerateTrial(virtual(1 / 5, 'tried'), mild).recommended[5]).toBe(0);
+  });
+
+  it.each([truth, harmful, mild])('is not changed by coherence, as the check values say: %s', (...p) => {
+    for (const slope of [1 / 5, 1 / 8, 1 / 10]) {
+      const off = enumerateTrial(virtual(slope, 'tried'), p);
+      const on = enumerateTrial(virtual(slope, 'tried', 'one-way'), p);
+      expect(on.recommended).toEqual(off.recommended);
+    }
   });
 });

@@ -105,6 +105,16 @@ describe('Robbins–Monro', () => {
     run.x.forEach((x, i) => expect(x).toBeCloseTo(expected[i] as number, 6));
   });
 
+  it('replays a correction from there on (FACTS A6, 11)', () => {
+    const run = runRule(settings(20), {
+      target: 0.25,
+      x1: 20,
+      responses: [0, 0, 0, 0, 0, 0, 1, 0],
+      sizes: 1,
+    });
+    expect(run.x[8]).toBeCloseTo(30.732143, 6);
+  });
+
   it('is the running mean for a_k = 1/k on w − X_k (identity; exact up to rounding)', () => {
     // x_{k+1} = x_k − (1/k)(ȳ_k − Γ) with ȳ_k = x_k − w_k + Γ and any start is the mean of w_1 … w_k
     const values = [0.3, 0.9, 0.15, 0.55, 0.7, 0.05, 0.85];
