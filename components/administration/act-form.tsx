@@ -7,6 +7,21 @@ import { SubmitButton } from '@/components/forms/submit-button';
 import { useActionForm } from '@/components/forms/use-action-form';
 import type { ButtonVariant } from '@/components/ui/button';
 import type { ActionResult, Submission } from '@/lib/schemas/action-result';
+import { installationInputSchemas } from '@/lib/schemas/installation-inputs';
+import { trialFormSchemas } from '@/lib/schemas/trial-forms';
+
+/** The acts that need no entries, each with the schema its action parses with. */
+const SCHEMAS = {
+  'resend-invitation': installationInputSchemas['resend-invitation'],
+  'reset-by-administrator': installationInputSchemas['reset-by-administrator'],
+  'disable-person': installationInputSchemas['disable-person'],
+  'enable-person': installationInputSchemas['enable-person'],
+  'retry-mail': installationInputSchemas['retry-mail'],
+  'end-membership': trialFormSchemas['end-membership'],
+} as const;
+
+type Acts = typeof SCHEMAS;
+type Input<Act extends keyof Acts> = z.input<Acts[Act]>;
 
 /**
  * An act on one record that needs no entries: a button that says what it does, and the answer beside it. What the act
@@ -15,20 +30,20 @@ import type { ActionResult, Submission } from '@/lib/schemas/action-result';
  * @param name what screen readers call it, with the record's name
  * @param saved what is said once it is done
  */
-export function ActForm<Values extends Record<string, string>>({
-  schema,
+export function ActForm<Act extends keyof Acts>({
+  act,
   values,
   action,
   name,
   label,
   pendingLabel,
   saved,
-  variant,
+  variant = 'secondary',
   small,
 }: {
-  schema: z.ZodType<unknown, Values>;
-  values: Values;
-  action: (input: Values & Submission) => Promise<ActionResult<unknown>>;
+  act: Act;
+  values: Input<Act>;
+  action: (input: Input<Act> & Submission) => Promise<ActionResult<unknown>>;
   name: string;
   label: string;
   pendingLabel: string;
@@ -38,16 +53,19 @@ export function ActForm<Values extends Record<string, string>>({
 }) {
   const router = useRouter();
   const state = useActionForm({
-    schema,
+    schema: SCHEMAS[act] as unknown as z.ZodType<Input<Act>, Input<Act>>,
     action,
     defaultValues: values as never,
     onSaved: () => router.refresh(),
   });
   return (
-    <ActionForm state={state} label={name} saved={saved} className="grid justify-items-start gap-2">
-      <SubmitButton variant={variant} small={small} pendingLabel={pendingLabel}>
-        {label}
-      </SubmitButton>
-    </ActionForm>
+    // A form takes no width of its own in a cell of a table; this gives it the button's.
+    <div className={small ? 'min-w-28' : undefined}>
+      <ActionForm state={state} label={name} saved={saved} className="grid justify-items-start gap-2">
+        <SubmitButton variant={variant} small={small} pendingLabel={pendingLabel}>
+          {label}
+        </SubmitButton>
+      </ActionForm>
+    </div>
   );
 }

@@ -30,9 +30,11 @@ export function AddSiteForm({
     <div className="max-w-md">
       <ActionForm state={state} label="Add a site" saved="Added. People can now be given roles for it.">
         <SelectField name="siteId" label="Add a site" prompt="Choose a site" choices={sites} />
-        <SubmitButton variant="secondary" pendingLabel="Adding…">
-          Add site
-        </SubmitButton>
+        <div className="max-md:grid">
+          <SubmitButton variant="secondary" pendingLabel="Adding…">
+            Add site
+          </SubmitButton>
+        </div>
       </ActionForm>
     </div>
   );

@@ -68,7 +68,9 @@ export function GrantForm({
             <CheckboxGroup name="siteIds" label="Sites" help="At least one." choices={sites} />
           )
         ) : null}
-        <SubmitButton pendingLabel="Granting…">Grant role</SubmitButton>
+        <div className="max-md:grid">
+          <SubmitButton pendingLabel="Granting…">Grant role</SubmitButton>
+        </div>
       </ActionForm>
     </div>
   );

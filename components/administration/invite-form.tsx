@@ -51,7 +51,9 @@ export function InviteForm({
           label="Administrator of the installation"
           help="Manages people, sites and trials; sees no clinical data, signs nothing, and can hold no role in a trial."
         />
-        <SubmitButton pendingLabel="Inviting…">Send invitation</SubmitButton>
+        <div className="max-md:grid">
+          <SubmitButton pendingLabel="Inviting…">Send invitation</SubmitButton>
+        </div>
       </ActionForm>
     </div>
   );

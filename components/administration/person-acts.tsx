@@ -1,6 +1,5 @@
 import type { ReactNode } from 'react';
 import type { ActionResult, Submission } from '@/lib/schemas/action-result';
-import { installationInputSchemas } from '@/lib/schemas/installation-inputs';
 import { ActForm } from './act-form';
 
 type Act = (input: { personId: string } & Submission) => Promise<ActionResult<unknown>>;
@@ -29,7 +28,7 @@ export function PersonActs({
     return (
       <Line what="Gives the account back as it was: with its old password, or waiting for a new invitation. Nobody is signed in by it.">
         <ActForm
-          schema={installationInputSchemas['enable-person']}
+          act="enable-person"
           values={values}
           action={actions.enablePerson}
           name={`Enable the account of ${printedName}`}
@@ -45,7 +44,7 @@ export function PersonActs({
       {state === 'invited' ? (
         <Line what="Mails a new link; the one sent before stops working.">
           <ActForm
-            schema={installationInputSchemas['resend-invitation']}
+            act="resend-invitation"
             values={values}
             action={actions.resendInvitation}
             name={`Send the invitation of ${printedName} again`}
@@ -58,7 +57,7 @@ export function PersonActs({
       ) : (
         <Line what="Mails a link to choose a new password, for somebody who cannot sign in. The old password works until the link is used; then every session ends.">
           <ActForm
-            schema={installationInputSchemas['reset-by-administrator']}
+            act="reset-by-administrator"
             values={values}
             action={actions.resetPassword}
             name={`Mail ${printedName} a link for a new password`}
@@ -75,7 +74,7 @@ export function PersonActs({
       ) : (
         <Line what="Ends every session and link at once. It can be undone.">
           <ActForm
-            schema={installationInputSchemas['disable-person']}
+            act="disable-person"
             values={values}
             action={actions.disablePerson}
             name={`Disable the account of ${printedName}`}

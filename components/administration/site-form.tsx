@@ -46,7 +46,9 @@ export function SiteForm({
           choices={timeZones.map((zone) => ({ value: zone, label: zone.replaceAll('_', ' ') }))}
           help="Times at the site are entered and shown in it."
         />
-        <SubmitButton pendingLabel="Creating…">Create site</SubmitButton>
+        <div className="max-md:grid">
+          <SubmitButton pendingLabel="Creating…">Create site</SubmitButton>
+        </div>
       </ActionForm>
     </div>
   );

@@ -50,7 +50,9 @@ export function TrialForm({
           choices={people}
           help="Writes the design. Administrators are not offered: they hold no role in a trial."
         />
-        <SubmitButton pendingLabel="Creating…">Create trial</SubmitButton>
+        <div className="max-md:grid">
+          <SubmitButton pendingLabel="Creating…">Create trial</SubmitButton>
+        </div>
       </ActionForm>
     </div>
   );

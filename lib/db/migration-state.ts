@@ -7,7 +7,7 @@ export interface MigrationState {
   readonly ran: number;
   readonly lastName: string | null;
   readonly lastRanAt: string | null;
-  /** Names this code knows and the database has not run. */
+  /** Names this code knows and the database has not run to their end. */
   readonly pending: readonly string[];
   /** Names the database has run and this code does not know: the code is older than the database. */
   readonly unknown: readonly string[];
@@ -16,7 +16,7 @@ export interface MigrationState {
 /** Reads the state of the migrations over the process's own pool, in one statement. */
 export async function migrationState(): Promise<MigrationState> {
   const rows = await sequelize().query<{ name: string; ranAt: Date }>(
-    'SELECT name, ran_at AS ranAt FROM migrations ORDER BY name',
+    'SELECT name, finished_at AS ranAt FROM migrations WHERE finished_at IS NOT NULL ORDER BY name',
     { type: QueryTypes.SELECT },
   );
   const known = new Set(migrations.map(({ name }) => name));

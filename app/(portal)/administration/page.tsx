@@ -1,10 +1,10 @@
 import type { Metadata } from 'next';
-import Link from 'next/link';
+import { PageLink } from '@/components/ui/page-link';
 import type { ReactNode } from 'react';
 import { PageTitle } from '@/components/layout/page-title';
 import { Section } from '@/components/layout/section';
 import { MarginNote, Sheet } from '@/components/layout/sheet';
-import { ButtonLink } from '@/components/ui/button';
+import { ButtonLink } from '@/components/ui/button-link';
 import { DefinitionList } from '@/components/ui/definition-list';
 import { Hash } from '@/components/ui/hash';
 import { Notice } from '@/components/ui/notice';
@@ -33,18 +33,12 @@ function concerns(
     mail.dead > 0 ? (
       <Notice key="dead" kind="error" title={`${count(mail.dead, 'mail')} given up`} live={false}>
         The mail server refused {mail.dead === 1 ? 'it' : 'them'} again and again.{' '}
-        <Link href="/administration/mail?state=dead" prefetch={false}>
-          See why, and try again
-        </Link>
-        .
+        <PageLink href="/administration/mail?state=dead">See why, and try again</PageLink>.
       </Notice>
     ) : null,
     staleInvitations > 0 ? (
       <Notice key="stale" kind="note" title={`${count(staleInvitations, 'invitation')} ran out`} live={false}>
-        The link was not used in time.{' '}
-        <Link href="/administration/people" prefetch={false}>
-          Find who is invited
-        </Link>{' '}
+        The link was not used in time. <PageLink href="/administration/people">Find who is invited</PageLink>{' '}
         and send it again.
       </Notice>
     ) : null,
@@ -97,38 +91,26 @@ export default async function AdministrationPage() {
               term: 'People',
               detail: (
                 <>
-                  <Link href="/administration/people" prefetch={false}>
-                    {people.active} active
-                  </Link>
-                  , {people.invited} invited, {people.disabled} disabled
+                  <PageLink href="/administration/people">{people.active} active</PageLink>, {people.invited}{' '}
+                  invited, {people.disabled} disabled
                 </>
               ),
             },
             { term: 'Administrators', detail: count(overview.administrators, 'active', 'active') },
             {
               term: 'Sites',
-              detail: (
-                <Link href="/administration/sites" prefetch={false}>
-                  {count(sites, 'site')}
-                </Link>
-              ),
+              detail: <PageLink href="/administration/sites">{count(sites, 'site')}</PageLink>,
             },
             {
               term: 'Trials',
-              detail: (
-                <Link href="/administration/trials" prefetch={false}>
-                  {count(trials, 'trial')}
-                </Link>
-              ),
+              detail: <PageLink href="/administration/trials">{count(trials, 'trial')}</PageLink>,
             },
             {
               term: 'Mail',
               detail: (
                 <>
-                  <Link href="/administration/mail" prefetch={false}>
-                    {mail.queued} waiting
-                  </Link>
-                  , {mail.sent} sent, {mail.dead} given up
+                  <PageLink href="/administration/mail">{mail.queued} waiting</PageLink>, {mail.sent} sent,{' '}
+                  {mail.dead} given up
                   {overview.oldestQueuedAt ? (
                     <>
                       ; the oldest waits since <TimeInZone at={overview.oldestQueuedAt} />
@@ -147,10 +129,7 @@ export default async function AdministrationPage() {
                       , the last <TimeInZone at={trail.lastEventAt} />
                     </>
                   ) : null}
-                  .{' '}
-                  <Link href="/administration/health" prefetch={false}>
-                    Verify it
-                  </Link>
+                  . <PageLink href="/administration/health">Verify it</PageLink>
                 </>
               ),
             },

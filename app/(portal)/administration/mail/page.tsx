@@ -1,5 +1,5 @@
 import type { Metadata } from 'next';
-import Link from 'next/link';
+import { PageLink } from '@/components/ui/page-link';
 import { ActForm } from '@/components/administration/act-form';
 import { MailStateChip, mailStateWord } from '@/components/administration/state-chips';
 import { PageTitle } from '@/components/layout/page-title';
@@ -15,7 +15,6 @@ import {
   type MailState,
   MOST_MAILS_LISTED,
 } from '@/lib/queries/administration/mail';
-import { installationInputSchemas } from '@/lib/schemas/installation-inputs';
 import { LINK_MAIL_KINDS } from '@/lib/schemas/one-time-link';
 import { requireInstallationReader } from '@/lib/server/session';
 import { retryMail } from './actions';
@@ -37,7 +36,7 @@ function RetryMail({ mail }: { mail: MailLine }) {
   }
   return (
     <ActForm
-      schema={installationInputSchemas['retry-mail']}
+      act="retry-mail"
       values={{ mailId: mail.mailId }}
       action={retryMail}
       name={`Try the mail to ${mail.address} again`}
@@ -89,17 +88,16 @@ export default async function MailPage({
       <Section title={state === null ? 'All mail' : mailStateWord(state)}>
         <nav aria-label="State of the mail" className="mb-4 flex flex-wrap gap-x-5 gap-y-1">
           {choices.map((choice) => (
-            <Link
+            <PageLink
               key={choice.label}
               href={
                 choice.state === null ? '/administration/mail' : `/administration/mail?state=${choice.state}`
               }
-              prefetch={false}
               aria-current={choice.state === state ? 'page' : undefined}
               className={choice.state === state ? 'font-semibold text-ink' : 'text-water underline'}
             >
               {choice.label}
-            </Link>
+            </PageLink>
           ))}
         </nav>
         <DataTable
@@ -111,10 +109,21 @@ export default async function MailPage({
             { key: 'address', header: 'To' },
             { key: 'state', header: 'State' },
             { key: 'attempts', header: 'Tries', kind: 'number' },
-            { key: 'sent', header: 'Sent', kind: 'time' },
+            {
+              key: 'sent',
+              header: 'Sent',
+              kind: 'time',
+              hiddenAtFirst: state !== null && state !== 'sent',
+            },
             { key: 'next', header: 'Next try', kind: 'time', hiddenAtFirst: state !== 'queued' },
-            { key: 'error', header: 'Last error', hiddenAtFirst: state === 'sent' || state === 'overtaken' },
-            ...(counts.dead > 0 ? [{ key: 'acts' as const, header: '', acts: true }] : []),
+            {
+              key: 'error',
+              header: 'Last error',
+              hiddenAtFirst: mails.every(({ lastError }) => lastError === null),
+            },
+            ...(mails.some((mail) => mail.state === 'dead')
+              ? [{ key: 'acts' as const, header: '', acts: true }]
+              : []),
           ]}
           rows={mails.map((mail) => ({
             id: mail.mailId,
@@ -130,7 +139,7 @@ export default async function MailPage({
             },
             content: {
               state: <MailStateChip state={mail.state} />,
-              acts: mail.state === 'dead' ? <RetryMail mail={mail} /> : undefined,
+              acts: mail.state === 'dead' ? <RetryMail mail={mail} /> : <></>,
             },
           }))}
           empty={<p className="text-ink-soft">No mail in this state.</p>}

@@ -49,7 +49,7 @@ export default async function PeoplePage({
           csvName="people.csv"
           columns={[
             { key: 'name', header: 'Name', rowHeader: true },
-            { key: 'email', header: 'E-mail address' },
+            { key: 'email', header: 'E-mail' },
             { key: 'state', header: 'State' },
             { key: 'roles', header: 'Roles' },
             { key: 'created', header: 'Since', kind: 'day', hiddenAtFirst: true },

@@ -1,5 +1,5 @@
 import type { Metadata } from 'next';
-import Link from 'next/link';
+import { PageLink } from '@/components/ui/page-link';
 import { notFound } from 'next/navigation';
 import { ActForm } from '@/components/administration/act-form';
 import { AddSiteForm } from '@/components/administration/add-site-form';
@@ -13,7 +13,6 @@ import { StaticTable } from '@/components/tables/static-table';
 import { StateChip } from '@/components/ui/chip';
 import { ROLE_NAMES } from '@/lib/policy/roles';
 import { candidates, trialTeamPage, type TrialTeamPage } from '@/lib/queries/administration/trials';
-import { trialFormSchemas } from '@/lib/schemas/trial-forms';
 import { trialCodeSchema } from '@/lib/schemas/trial-inputs';
 import { requireInstallationReader } from '@/lib/server/session';
 import { addSite, endMembership, grantMembership } from '../actions';
@@ -49,9 +48,7 @@ function Team({ trial }: { trial: TrialTeamPage }) {
         content: {
           name: (
             <>
-              <Link href={`/administration/people/${member.personId}`} prefetch={false}>
-                {member.printedName}
-              </Link>
+              <PageLink href={`/administration/people/${member.personId}`}>{member.printedName}</PageLink>
               {member.personState === 'active' ? null : (
                 <>
                   {' '}
@@ -63,7 +60,7 @@ function Team({ trial }: { trial: TrialTeamPage }) {
           acts:
             member.endedAt === null ? (
               <ActForm
-                schema={trialFormSchemas['end-membership']}
+                act="end-membership"
                 values={{ trialCode: trial.code, personId: member.personId }}
                 action={endMembership}
                 name={`End the role of ${member.printedName}`}
@@ -71,7 +68,9 @@ function Team({ trial }: { trial: TrialTeamPage }) {
                 pendingLabel="Ending…"
                 small
               />
-            ) : undefined,
+            ) : (
+              <></>
+            ),
         },
       }))}
     />
@@ -110,9 +109,7 @@ export default async function TrialTeamPageView({ params }: Params) {
       }
     >
       <p className="mb-1 flex flex-wrap items-center gap-x-3 gap-y-1 text-sm">
-        <Link href="/administration/trials" prefetch={false}>
-          Trials
-        </Link>
+        <PageLink href="/administration/trials">Trials</PageLink>
         <span className="font-mono text-xs">{trial.code}</span>
         <StateChip state={trial.state} />
       </p>
@@ -131,7 +128,6 @@ export default async function TrialTeamPageView({ params }: Params) {
           action={grantMembership}
         />
       </Section>
-      <div className="h-5.5" />
       <Section title="Sites">
         <StaticTable
           caption="Sites"
@@ -165,10 +161,7 @@ export default async function TrialTeamPageView({ params }: Params) {
             />
           ) : (
             <p className="text-sm text-ink-soft">
-              Every site there is takes part.{' '}
-              <Link href="/administration/sites" prefetch={false}>
-                Create another
-              </Link>{' '}
+              Every site there is takes part. <PageLink href="/administration/sites">Create another</PageLink>{' '}
               to add it here.
             </p>
           )}
