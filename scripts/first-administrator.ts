@@ -1,5 +1,5 @@
 /*
- * Prints a new single-use link for the first administrator: node --import tsx scripts/first-administrator.ts.
+ * Prints a new single-use link for the first administrator: npm run first-administrator.
  * Nothing is made where an administrator exists.
  */
 import { makeFirstAdministratorLink } from '@/lib/commands/first-administrator-link';

@@ -1,6 +1,6 @@
 /*
- * Verifies every chain of the trail: node --import tsx scripts/verify-trail.ts (npm run verify-trail finds the
- * database). Prints one line a chain and ends with 1 when a chain is broken.
+ * Verifies every chain of the trail: npm run verify-trail. Prints one line a chain; ends with 1 when a chain is
+ * broken, with 2 when it could not be read.
  */
 import { BREAK_WORDS } from '@/lib/conduct/chain';
 import { closeDatabase } from '@/lib/db/connection';

@@ -20,7 +20,8 @@ import { addSite, endMembership, grantMembership } from '../actions';
 type Params = { params: Promise<{ code: string }> };
 
 export async function generateMetadata({ params }: Params): Promise<Metadata> {
-  return { title: `Team of ${decodeURIComponent((await params).code).slice(0, 20)}` };
+  const code = trialCodeSchema.safeParse((await params).code);
+  return { title: code.success ? `Team of ${code.data}` : 'Team' };
 }
 
 function Team({ trial }: { trial: TrialTeamPage }) {
@@ -80,7 +81,7 @@ function Team({ trial }: { trial: TrialTeamPage }) {
 /** A trial's sites and team. The administrator sees who may do what in it, and nothing of what was done. */
 export default async function TrialTeamPageView({ params }: Params) {
   await requireInstallationReader('memberships.grant');
-  const code = trialCodeSchema.safeParse(decodeURIComponent((await params).code));
+  const code = trialCodeSchema.safeParse((await params).code);
   const [trial, people] = code.success
     ? await Promise.all([trialTeamPage(code.data), candidates()])
     : [null, []];
