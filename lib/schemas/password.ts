@@ -71,7 +71,7 @@ export function whyGuessable(password: string, personalWords: readonly string[] 
  */
 export const newPasswordSchema = z
   .string({ error: `Choose a password of at least ${SHORTEST_PASSWORD} characters.` })
-  .max(LONGEST_PASSWORD, { error: `A password has at most ${LONGEST_PASSWORD} characters.` })
+  .max(LONGEST_PASSWORD, { error: `A password has at most ${LONGEST_PASSWORD} characters.`, abort: true })
   .min(SHORTEST_PASSWORD, {
     error: `A password has at least ${SHORTEST_PASSWORD} characters. Several words that do not belong together are easy to keep.`,
   })
