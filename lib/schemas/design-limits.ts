@@ -10,6 +10,8 @@ export const DESIGN_LIMITS = {
   subjects: { minimum: 1, maximum: 10_000 },
   repeatedTimes: { minimum: 2, maximum: 200 },
   windowLength: { minimum: 1, maximum: 400 },
+  /** Versions of one trial's design. */
+  versions: 1000,
   priorParameter: { above: 0, maximum: 1000 },
 } as const;
 

@@ -71,6 +71,11 @@ export function returnDesign(deciding: Deciding, input: TrialInput<'return-desig
   deciding.emit({ kind: 'design-returned', versionId: version.id, reason: input.reason });
 }
 
+/** The sentence a reviewer states by approving a design version. */
+export function approvalMeaning(trialCode: string, versionNumber: number): string {
+  return `I have reviewed design version ${versionNumber} of ${trialCode} and approve it.`;
+}
+
 /**
  * Approves a submitted version by signature; a reviewer who did not propose it. The approval computes
  * recommendation 1, the starting dose, which then waits for the quorum like every other step.
@@ -91,7 +96,7 @@ export function approveDesign(deciding: Deciding, input: TrialInput<'approve-des
       decision: 'approve',
       dose: null,
       reason: null,
-      meaning: `I have reviewed design version ${version.number} of ${deciding.state.trial.code} and approve it.`,
+      meaning: approvalMeaning(deciding.state.trial.code, version.number),
     },
   );
   deciding.emit({ kind: 'design-approved', versionId: version.id });
