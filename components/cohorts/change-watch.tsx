@@ -3,7 +3,6 @@
 import { useQuery } from '@tanstack/react-query';
 import { useRouter } from 'next/navigation';
 import { useTransition } from 'react';
-import { cohortRevisionSchema } from '@/lib/schemas/cohort-revision';
 import { Button } from '../ui/button';
 import { Notice } from '../ui/notice';
 
@@ -23,6 +22,8 @@ async function fetchRevision(trialCode: string, number: number, signal: AbortSig
   const address = `/api/trials/${encodeURIComponent(trialCode)}/cohorts/${number}`;
   const response = await fetch(address, { signal, headers: { accept: 'application/json' } });
   if (!response.ok) throw new AnswerError(response.status);
+  // The schema library is fetched with the first question asked, not with the page.
+  const { cohortRevisionSchema } = await import('@/lib/schemas/cohort-revision');
   return cohortRevisionSchema.parse(await response.json()).revision;
 }
 

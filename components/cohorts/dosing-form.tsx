@@ -10,16 +10,16 @@ import { SubmitButton } from '@/components/forms/submit-button';
 import { TextArea } from '@/components/forms/text-field';
 import { useActionForm } from '@/components/forms/use-action-form';
 import { equalDecimals } from '@/lib/design/decimal';
-import { doseProblem } from '@/lib/schemas/dose';
 import { trialFormSchemas } from '@/lib/schemas/trial-forms';
 import type { CohortWork, SubjectData, TrialAction } from './cohort-data';
 import { useSay } from './saved-notice';
 
 const schema = trialFormSchemas['record-dosing'];
 
-/** Whether a dose as typed is one, and another than the released one. */
+/** Whether a dose as typed is a number, and another than the released one; the schema says what else is wrong. */
 function differs(typed: string, released: string): boolean {
-  return doseProblem(typed) === null && !equalDecimals(typed.trim(), released);
+  const text = typed.trim();
+  return /^\d{1,20}(\.\d{1,20})?$/.test(text) && !equalDecimals(text, released);
 }
 
 /** Records that a subject was dosed: when, and the dose really given, with the reason where it is another one. */

@@ -31,7 +31,7 @@ function show(of: typeof sites, why: string | null = null) {
       />
     </SavedNoticeProvider>,
   );
-  return { actions, user: userEvent.setup() };
+  return { actions, user: userEvent.setup({ delay: null }) };
 }
 
 describe('reserving a place', () => {

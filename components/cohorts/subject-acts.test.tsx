@@ -28,7 +28,7 @@ const page = (subject: OwnSubjectData, actions: ReturnType<typeof answering>) =>
 );
 
 function show(subject: OwnSubjectData, actions = answering(recorded)) {
-  return { actions, user: userEvent.setup(), view: render(page(subject, actions)) };
+  return { actions, user: userEvent.setup({ delay: null }), view: render(page(subject, actions)) };
 }
 
 const dosingTime = () => screen.getByLabelText('Date and time of dosing');
@@ -58,7 +58,7 @@ describe('recording a dosing', () => {
 
   it('takes the minute of the server’s clock for "now"', async () => {
     const { user } = show(reservedSubject());
-    await user.click(screen.getByRole('button', { name: 'Date and time of dosing: now' }));
+    await user.click(screen.getByRole('button', { name: 'Now: enter the present time' }));
     expect(dosingTime()).toHaveValue('2027-03-14T12:00');
   });
 
@@ -75,6 +75,7 @@ describe('recording a dosing', () => {
     await user.type(dosingTime(), '2027-03-28T02:30');
     await user.click(screen.getByRole('button', { name: 'Record dosing' }));
     const alert = await screen.findByRole('alert');
+    expect(alert).toHaveFocus();
     expect(alert).toHaveTextContent('there was no 02:30 on 28 Mar 2027 in Europe/Vienna');
     expect(dosingTime()).toHaveValue('2027-03-28T02:30');
     expect(actions.recordDosing).not.toHaveBeenCalled();

@@ -102,7 +102,7 @@ export function DateTimeField(
           <Button
             small
             disabled={disabled}
-            aria-label={`${label}: now`}
+            aria-label="Now: enter the present time"
             onClick={() => {
               const minute = startOfMinute(serverNow());
               enter(localText(minute, zone), minute);

@@ -19,14 +19,17 @@ export function ErrorSummary({ outcome }: { outcome: FormOutcome<unknown> }) {
   const { errors } = useFormState({ control });
   const box = useRef<HTMLDivElement>(null);
   const failed = outcome.kind === 'invalid' || outcome.kind === 'refused' || outcome.kind === 'lost';
-  useEffect(() => {
-    if (failed) box.current?.focus();
-  }, [failed, outcome]);
-  if (!failed) return null;
-
   const problems =
-    outcome.kind === 'lost' ? [] : outcome.problems.filter(({ name }) => name === '' || get(errors, name));
-  if (outcome.kind === 'invalid' && problems.length === 0) return null;
+    outcome.kind === 'invalid' || outcome.kind === 'refused'
+      ? outcome.problems.filter(({ name }) => name === '' || get(errors, name))
+      : [];
+  // The fields learn of their errors a moment after the attempt has failed: the box is focused once it is there.
+  const shown = failed && (outcome.kind !== 'invalid' || problems.length > 0);
+  useEffect(() => {
+    if (shown) box.current?.focus();
+  }, [shown, outcome]);
+  if (!shown) return null;
+
   return (
     <div
       ref={box}
