@@ -26,7 +26,7 @@ export function EndSessionForm({
   });
   return (
     <ActionForm state={state} label={`End the session begun ${begun}`}>
-      <SubmitButton small pendingLabel="Ending…">
+      <SubmitButton variant="secondary" small pendingLabel="Ending…">
         End
       </SubmitButton>
     </ActionForm>

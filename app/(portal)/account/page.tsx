@@ -34,12 +34,12 @@ function Roles({ reader }: { reader: Reader }) {
 
 function SessionLine({ session, isThis }: { session: OwnSession; isThis: boolean }) {
   return (
-    <li className="flex flex-wrap items-center justify-between gap-x-4 gap-y-1 border-b border-line py-2">
+    <li className="grid grid-cols-[minmax(0,1fr)_6rem] items-center gap-x-4 border-b border-line py-2">
       <span>
         Begun <TimeInZone at={session.createdAt} />, last used <TimeInZone at={session.lastSeenAt} />
       </span>
       {isThis ? (
-        <span className="text-sm text-ink-soft">This one</span>
+        <span className="text-right text-sm text-ink-soft">This one</span>
       ) : (
         <EndSessionForm
           sessionId={session.id}
