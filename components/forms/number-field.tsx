@@ -27,7 +27,8 @@ function valueOf(text: string): number | string {
  * The form's value is a number, '' while empty, or the text as typed while it cannot be read.
  */
 export function NumberField(props: NumberFieldProps) {
-  const { name, label, help, optional, labelHidden, disabled, unit, emptyAs, whole } = props;
+  const { name, help, optional, labelHidden, disabled, unit, emptyAs, whole } = props;
+  const label = unit ? `${props.label}, ${unit}` : props.label;
   const elementId = useFieldFacts(name, { label, number: true, emptyAs });
   const {
     field: { ref, value, onChange, onBlur },
@@ -36,9 +37,7 @@ export function NumberField(props: NumberFieldProps) {
   const shown = Object.is(valueOf(typed), value ?? '') ? typed : textOfNumber(value);
   const error = useFieldError(name);
   return (
-    <FieldFrame
-      {...{ elementId, label: unit ? `${label}, ${unit}` : label, optional, help, error, labelHidden }}
-    >
+    <FieldFrame {...{ elementId, label, optional, help, error, labelHidden }}>
       <input
         id={elementId}
         ref={ref}
@@ -63,14 +62,13 @@ export function NumberField(props: NumberFieldProps) {
 
 /** An exact decimal, such as a dose: it stays the text that was typed, and the schema reads it. */
 export function DecimalField(props: FieldProps & { unit?: string; emptyAs?: undefined | null }) {
-  const { name, label, help, optional, labelHidden, disabled, unit, emptyAs } = props;
+  const { name, help, optional, labelHidden, disabled, unit, emptyAs } = props;
+  const label = unit ? `${props.label}, ${unit}` : props.label;
   const elementId = useFieldFacts(name, { label, ...('emptyAs' in props ? { emptyAs } : {}) });
   const { register } = useFormContext();
   const error = useFieldError(name);
   return (
-    <FieldFrame
-      {...{ elementId, label: unit ? `${label}, ${unit}` : label, optional, help, error, labelHidden }}
-    >
+    <FieldFrame {...{ elementId, label, optional, help, error, labelHidden }}>
       <input
         {...register(name)}
         id={elementId}

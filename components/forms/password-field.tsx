@@ -35,13 +35,12 @@ export function PasswordField(
         />
         <button
           type="button"
-          aria-pressed={shown}
+          aria-label={`${shown ? 'Hide' : 'Show'} ${label.toLowerCase()}`}
           aria-controls={elementId}
           onClick={() => setShown(!shown)}
           className="absolute inset-y-0 right-0 min-w-11 px-3 text-sm text-water underline underline-offset-3"
         >
           {shown ? 'Hide' : 'Show'}
-          <span className="sr-only"> {label.toLowerCase()}</span>
         </button>
       </span>
     </FieldFrame>
