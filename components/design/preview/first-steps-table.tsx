@@ -1,0 +1,43 @@
+import type { Column } from '@/components/tables/columns';
+import { StaticTable } from '@/components/tables/static-table';
+import { doseText } from '@/lib/design/dose-text';
+import type { Design } from '@/lib/schemas/design';
+import type { Dose } from '@/lib/schemas/dose';
+import { unitText } from '@/lib/schemas/units';
+import { firstSteps } from './first-steps';
+
+/** The first ten steps in dose units, seen from one dose of the design. */
+export function FirstStepsTable({ design, around }: { design: Design; around: Dose }) {
+  const steps = firstSteps(design, around);
+  const unit = unitText(design.unit);
+  const hasMoves = design.doses.kind === 'levels';
+  const columns: Column[] = [
+    { key: 'k', header: 'Step k', rowHeader: true },
+    { key: 'gain', header: 'Gain', end: true },
+    { key: 'none', header: 'After no response', unit, end: true },
+    { key: 'all', header: 'After all respond', unit, end: true },
+    ...(hasMoves
+      ? ([
+          { key: 'moveNone', header: 'No responses, cohorts', end: true },
+          { key: 'moveAll', header: 'All respond, cohorts', end: true },
+        ] as const)
+      : []),
+  ];
+  return (
+    <StaticTable
+      caption={`The first ${steps.length} steps from ${doseText(design, around)}`}
+      columns={columns}
+      rows={steps.map((step) => ({
+        id: String(step.k),
+        values: {
+          k: step.k,
+          gain: step.gain,
+          none: step.afterNone,
+          all: step.afterAll,
+          moveNone: step.moveNone,
+          moveAll: step.moveAll,
+        },
+      }))}
+    />
+  );
+}

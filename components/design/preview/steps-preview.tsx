@@ -1,0 +1,47 @@
+'use client';
+
+import { useId, useState } from 'react';
+import { controlClass } from '@/components/forms/control-class';
+import { equalDecimals } from '@/lib/design/decimal';
+import { doseText } from '@/lib/design/dose-text';
+import type { Design } from '@/lib/schemas/design';
+import { FIRST_STEPS, dosesToStepFrom } from './first-steps';
+import { FirstStepsTable } from './first-steps-table';
+
+/** The first steps in dose units from a dose the reader chooses; the starting dose at first. */
+export function StepsPreview({ design }: { design: Design }) {
+  const [chosen, setChosen] = useState<string | null>(null);
+  const id = useId();
+  const doses = dosesToStepFrom(design);
+  const around =
+    doses.find((dose) => chosen !== null && equalDecimals(dose, chosen)) ??
+    doses.find((dose) => equalDecimals(dose, design.startingDose)) ??
+    design.startingDose;
+  return (
+    <div className="grid gap-2.5">
+      <label htmlFor={id} className="flex flex-wrap items-center gap-x-2.5 gap-y-1 font-semibold">
+        The first {FIRST_STEPS} steps from
+        <select
+          id={id}
+          value={around}
+          onChange={(event) => setChosen(event.target.value)}
+          className={`${controlClass(undefined, true)} w-auto font-normal`}
+        >
+          {doses.map((dose) => (
+            <option key={dose} value={dose}>
+              {doseText(design, dose)}
+            </option>
+          ))}
+        </select>
+      </label>
+      <FirstStepsTable design={design} around={around} />
+      <p className="text-sm text-ink-soft">
+        Where the rule’s value would go from there after one cohort without a response, and after one of
+        responses only, before any guardrail.
+        {design.doses.kind === 'levels'
+          ? ' The last columns: how many such cohorts in a row change the level, guardrails included; frozen means more than remain.'
+          : ''}
+      </p>
+    </div>
+  );
+}
