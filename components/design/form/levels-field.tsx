@@ -4,8 +4,8 @@ import { useId, useState } from 'react';
 import { useFormContext, useWatch } from 'react-hook-form';
 import { GroupError } from '@/components/forms/choice-fields';
 import { controlClass } from '@/components/forms/control-class';
-import { describedBy, FieldFrame } from '@/components/forms/field-frame';
-import { DecimalField } from '@/components/forms/number-field';
+import { describedBy, FieldError, FieldFrame, useFieldError } from '@/components/forms/field-frame';
+import { useFieldFacts } from '@/components/forms/form-context';
 import { Button } from '@/components/ui/button';
 import { DESIGN_LIMITS } from '@/lib/schemas/design-limits';
 import { LEVELS_TEXT_LENGTH, readLevels } from './levels-text';
@@ -28,24 +28,16 @@ export function LevelsField({ unit }: { unit: string }) {
       <GroupError name={NAME} label="Dose levels" />
       <ol className="grid gap-1.5">
         {levels.map((_, index) => (
-          <li key={index} className="flex items-start gap-3">
-            <span aria-hidden className="w-5 pt-2 text-right text-ink-soft">
-              {index + 1}
-            </span>
-            <div className="min-w-0 flex-1">
-              <DecimalField name={`${NAME}.${index}`} label={`Level ${index + 1}`} unit={unit} labelHidden />
-            </div>
-            <Button
-              small
-              variant="quiet"
-              className="mt-1.5"
-              aria-label={`Remove level ${index + 1}`}
-              disabled={levels.length <= minimum}
-              onClick={() => set(levels.filter((_each, other) => other !== index))}
-            >
-              Remove
-            </Button>
-          </li>
+          <LevelRow
+            key={index}
+            name={`${NAME}.${index}`}
+            number={index + 1}
+            onRemove={
+              levels.length > minimum
+                ? () => set(levels.filter((_each, other) => other !== index))
+                : undefined
+            }
+          />
         ))}
       </ol>
       <div className="flex flex-wrap items-start gap-x-4 gap-y-2 pl-8">
@@ -59,6 +51,46 @@ export function LevelsField({ unit }: { unit: string }) {
         <PasteLevels onRead={set} />
       </div>
     </fieldset>
+  );
+}
+
+/** One level: its number, its dose, its removal, and beside them why it is refused. */
+function LevelRow({ name, number, onRemove }: { name: string; number: number; onRemove?: () => void }) {
+  const label = `Level ${number}`;
+  const elementId = useFieldFacts(name, { label });
+  const { register } = useFormContext();
+  const error = useFieldError(name);
+  return (
+    <li className="flex flex-wrap items-center gap-x-3 gap-y-1">
+      <label htmlFor={elementId} className="w-5 text-right text-ink-soft">
+        {number}
+      </label>
+      <span className="w-40">
+        <input
+          {...register(name)}
+          id={elementId}
+          aria-label={label}
+          type="text"
+          inputMode="decimal"
+          autoComplete="off"
+          required
+          className={`${controlClass(error)} text-right`}
+          {...describedBy(elementId, null, error)}
+        />
+      </span>
+      <Button
+        small
+        variant="quiet"
+        aria-label={`Remove level ${number}`}
+        disabled={onRemove === undefined}
+        onClick={onRemove}
+      >
+        Remove
+      </Button>
+      <div className="min-w-40 flex-1 empty:hidden max-md:w-full max-md:flex-none">
+        <FieldError elementId={elementId} error={error} />
+      </div>
+    </li>
   );
 }
 

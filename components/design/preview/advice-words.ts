@@ -11,15 +11,23 @@ export interface AdviceInWords {
   readonly cautions: readonly string[];
 }
 
-function errorText(advice: DesignAdvice, design: Design): string {
+function errorItems(advice: DesignAdvice, design: Design): WordsItem[] {
   const { asymptoticError, bestError, linearError } = advice.gains.believed;
   const unit = workingUnit(design);
-  const least = `the least possible is ${computedText(bestError)}`;
-  const own =
+  const inLargeSamples =
     asymptoticError === null
-      ? `no large-sample value; ${computedText(linearError)} ${unit} if the curve were straight`
-      : `${computedText(asymptoticError)} ${unit} in large samples, ${computedText(linearError)} if the curve were straight and from this start`;
-  return `${own}; ${least}`;
+      ? 'none in large samples, where 2cD is not above 1'
+      : `${computedText(asymptoticError)} ${unit} in large samples`;
+  return [
+    {
+      term: `Standard error after ${design.maximumCohorts} cohorts`,
+      detail: `${inLargeSamples}; the least of any gain is ${computedText(bestError)}`,
+    },
+    {
+      term: 'Error from this start',
+      detail: `${computedText(linearError)} ${unit} on average, were the curve straight at the target`,
+    },
+  ];
 }
 
 function settlingText(advice: DesignAdvice, design: Design): string {
@@ -57,10 +65,7 @@ export function adviceInWords(design: Design, curve: BelievedCurve): AdviceInWor
             : `, ${Math.round(believed.efficiency * 100)} % efficient`
         }`,
       },
-      {
-        term: `Standard error after ${design.maximumCohorts} cohorts`,
-        detail: errorText(advice, design),
-      },
+      ...errorItems(advice, design),
       ...(advice.settling ? [{ term: 'Can settle on', detail: settlingText(advice, design) }] : []),
       ...(advice.freeze ? [{ term: 'Freezes', detail: freezeText(advice) }] : []),
     ],

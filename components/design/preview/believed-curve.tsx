@@ -32,13 +32,13 @@ export function BelievedCurve({ design }: { design: Design }) {
   );
   const unit = unitText(design.unit);
   return (
-    <div className="grid gap-4">
-      <p className="text-sm text-ink-soft">
+    <div className="@container grid gap-4">
+      <p className="max-w-prose text-sm text-ink-soft">
         {typed === null
           ? 'The curve this rule’s settings take for granted, with the target at the middle of the doses. Type your own belief: it is a preview and is not stored.'
           : 'Your belief, for this preview only: it is not stored with the design.'}
       </p>
-      <div role="group" aria-label="Believed curve" className="grid grid-cols-2 gap-x-4 gap-y-3">
+      <div role="group" aria-label="Believed curve" className="grid max-w-120 grid-cols-2 gap-x-4 gap-y-3">
         {field('dose1', `At a dose of, ${unit}`)}
         {field('probability1', 'probability')}
         {field('dose2', `and at, ${unit}`)}
@@ -76,17 +76,19 @@ function Believed({
 }) {
   const { items, cautions } = adviceInWords(design, curve);
   return (
-    <>
+    <div className="grid items-start gap-x-9 gap-y-4 @3xl:grid-cols-2">
       <CurveFigure design={design} curve={curve} />
-      {cautions.length > 0 ? (
-        <ul className="grid gap-1.5 border-l-4 border-ochre bg-ochre-wash px-3.5 py-2.5">
-          {cautions.map((caution) => (
-            <li key={caution}>{caution}</li>
-          ))}
-        </ul>
-      ) : null}
-      <WordsList items={items} />
-    </>
+      <div className="grid gap-4">
+        {cautions.length > 0 ? (
+          <ul className="grid gap-1.5 border-l-4 border-ochre bg-ochre-wash px-3.5 py-2.5">
+            {cautions.map((caution) => (
+              <li key={caution}>{caution}</li>
+            ))}
+          </ul>
+        ) : null}
+        <WordsList items={items} />
+      </div>
+    </div>
   );
 }
 

@@ -10,17 +10,16 @@ import { firstSteps } from './first-steps';
 export function FirstStepsTable({ design, around }: { design: Design; around: Dose }) {
   const steps = firstSteps(design, around);
   const unit = unitText(design.unit);
-  const hasMoves = design.doses.kind === 'levels';
   const columns: Column[] = [
-    { key: 'k', header: 'Step k', rowHeader: true },
+    { key: 'k', header: 'k', rowHeader: true },
     { key: 'gain', header: 'Gain', end: true },
-    { key: 'none', header: 'After no response', unit, end: true },
-    { key: 'all', header: 'After all respond', unit, end: true },
-    ...(hasMoves
-      ? ([
-          { key: 'moveNone', header: 'No responses, cohorts', end: true },
-          { key: 'moveAll', header: 'All respond, cohorts', end: true },
-        ] as const)
+    { key: 'none', header: 'After none', unit, end: true },
+    { key: 'all', header: 'After all', unit, end: true },
+    ...(steps.some(({ moveNone }) => moveNone !== null)
+      ? [{ key: 'moveNone', header: 'Cohorts without, to change', end: true }]
+      : []),
+    ...(steps.some(({ moveAll }) => moveAll !== null)
+      ? [{ key: 'moveAll', header: 'Cohorts of all, to change', end: true }]
       : []),
   ];
   return (

@@ -5,6 +5,7 @@ import { doseText } from '@/lib/design/dose-text';
 import { stepSizes } from '@/lib/design/step-sizes';
 import type { Design } from '@/lib/schemas/design';
 import type { Dose } from '@/lib/schemas/dose';
+import { unitText } from '@/lib/schemas/units';
 import { computedDoseText, computedText } from './computed-text';
 
 /** How many steps are shown. */
@@ -17,29 +18,42 @@ export interface FirstStep {
   /** The rule's value after a cohort without and with nothing but responses, in dose units. */
   readonly afterNone: string;
   readonly afterAll: string;
-  /** What it takes to change the dose: "1 cohort: 20 mg", "stays"; null on a range, where every step moves. */
+  /** How many such cohorts in a row change the dose and to which: "2, to 20", or "frozen"; null where it is not asked. */
   readonly moveNone: string | null;
   readonly moveAll: string | null;
 }
 
-function moveText(design: Design, around: Dose, ahead: RunAhead, isDown: boolean): string {
+function moveText(design: Design, { cohorts, to, stops }: RunAhead): string {
+  if (cohorts === null) return stops ? 'stops first' : 'frozen';
+  if (to === null) return `${cohorts}, all closed`;
+  return `${cohorts}, to ${doseNumber(design, to)}`;
+}
+
+function doseNumber(design: Design, dose: Dose): string {
+  return doseText(design, dose).replace(` ${unitText(design.unit)}`, '');
+}
+
+/** Which ends of the doses a dose is: there is nothing beyond them to move to. */
+function endsAt(design: Design, dose: Dose): { lowest: boolean; highest: boolean } {
   const doses = doseSetOf(design.doses, design.scale);
-  const end = isDown ? doses.dose(0) : doses.dose(doses.count - 1);
-  if (equalDecimals(around, end)) return isDown ? 'lowest' : 'highest';
-  if (ahead.cohorts === null) return 'frozen';
-  const to = ahead.to === null ? 'all closed' : doseText(design, ahead.to);
-  return `${ahead.cohorts} in a row: ${to}`;
+  return {
+    lowest: equalDecimals(dose, doses.dose(0)),
+    highest: equalDecimals(dose, doses.dose(doses.count - 1)),
+  };
 }
 
 /**
  * The first ten steps of a design seen from one of its doses: the gain, where the value would go after a cohort without and
- * with nothing but responses, and on levels how many such cohorts in a row change the dose.
+ * with nothing but responses, and on levels how many such cohorts in a row change the dose, in the directions where there is
+ * a level to change to.
  * @param around a dose of the design
  */
 export function firstSteps(design: Design, around: Dose): FirstStep[] {
   const sizes = stepSizes(design, around, FIRST_STEPS);
   const moves = design.doses.kind === 'levels' ? stepAdvice(design, around) : [];
+  const { lowest, highest } = endsAt(design, around);
   const responsesLower = design.response.direction === 'rising';
+  const isEnd = { none: responsesLower ? highest : lowest, all: responsesLower ? lowest : highest };
   return sizes.map((size, index) => {
     const move = moves[index];
     return {
@@ -47,8 +61,8 @@ export function firstSteps(design: Design, around: Dose): FirstStep[] {
       gain: computedText(size.gain),
       afterNone: computedDoseText(size.doseAfterNone, design.doseNotation),
       afterAll: computedDoseText(size.doseAfterAll, design.doseNotation),
-      moveNone: move ? moveText(design, around, move.noResponses, !responsesLower) : null,
-      moveAll: move ? moveText(design, around, move.allResponses, responsesLower) : null,
+      moveNone: move && !isEnd.none ? moveText(design, move.noResponses) : null,
+      moveAll: move && !isEnd.all ? moveText(design, move.allResponses) : null,
     };
   });
 }

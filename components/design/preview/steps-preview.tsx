@@ -21,25 +21,27 @@ export function StepsPreview({ design }: { design: Design }) {
     <div className="grid gap-2.5">
       <label htmlFor={id} className="flex flex-wrap items-center gap-x-2.5 gap-y-1 font-semibold">
         The first {FIRST_STEPS} steps from
-        <select
-          id={id}
-          value={around}
-          onChange={(event) => setChosen(event.target.value)}
-          className={`${controlClass(undefined, true)} w-auto font-normal`}
-        >
-          {doses.map((dose) => (
-            <option key={dose} value={dose}>
-              {doseText(design, dose)}
-            </option>
-          ))}
-        </select>
+        <span>
+          <select
+            id={id}
+            value={around}
+            onChange={(event) => setChosen(event.target.value)}
+            className={`${controlClass(undefined, true)} font-normal`}
+          >
+            {doses.map((dose) => (
+              <option key={dose} value={dose}>
+                {doseText(design, dose)}
+              </option>
+            ))}
+          </select>
+        </span>
       </label>
       <FirstStepsTable design={design} around={around} />
-      <p className="text-sm text-ink-soft">
-        Where the rule’s value would go from there after one cohort without a response, and after one of
-        responses only, before any guardrail.
+      <p className="max-w-prose text-sm text-ink-soft">
+        After none, after all: where the rule’s value would go from there after one cohort without a response,
+        and after one of responses only, before any guardrail.
         {design.doses.kind === 'levels'
-          ? ' The last columns: how many such cohorts in a row change the level, guardrails included; frozen means more than remain.'
+          ? ' To change: how many such cohorts in a row change the level, and to which, guardrails included; frozen where more would be needed than remain.'
           : ''}
       </p>
     </div>

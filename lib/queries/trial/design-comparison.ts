@@ -40,13 +40,16 @@ export interface ComparisonView {
   readonly released: readonly (string | null)[];
 }
 
+/** What a design's own rule is set beside when nothing else was asked for. */
+const COMPARED_FIRST: readonly RuleName[] = ['virtual-observations', 'robbins-monro'];
+
 function doseOf({ dose, kind }: ComparedStep): ComparedDose {
   return { dose, isStop: kind === 'stop' };
 }
 
 /**
  * The comparison for a trial with a completed cohort; null before one, or for a reader who may not see recommendations.
- * @param chosen the rules asked for; fewer than two are completed by the design's own and then by the first offered
+ * @param chosen the rules asked for; fewer than two are completed by the design's own and by the rule it is first set beside
  */
 export function comparisonOf(trial: ReaderTrial, chosen: readonly RuleName[]): ComparisonView | null {
   if (!trial.may('recommendation.read')) return null;
@@ -56,7 +59,7 @@ export function comparisonOf(trial: ReaderTrial, chosen: readonly RuleName[]): C
   if (version === null || history.length === 0) return null;
   const { design } = version;
   const compared = new Set<RuleName>(chosen);
-  for (const name of [design.rule.name, ...RULE_NAMES]) if (compared.size < 2) compared.add(name);
+  for (const name of [design.rule.name, ...COMPARED_FIRST]) if (compared.size < 2) compared.add(name);
   const names = RULE_NAMES.filter((name) => compared.has(name));
   const designs = names.map((name) => ({ label: name, design: comparableDesign(name, design) }));
   const courses = compareDesigns(designs, { cohorts: history });

@@ -38,6 +38,8 @@ export default async function DesignPage({
         <PageTitle lede={ledeOf(shown)}>Design, version {shown.number}</PageTitle>
         {view.edit && shown.state === 'draft' ? (
           <ButtonLink href={`/trials/${view.trialCode}/design/edit`}>Edit the draft</ButtonLink>
+        ) : shown.approve || shown.return ? (
+          <a href="#decision">To your decision</a>
         ) : null}
       </div>
       {shown.state === 'draft' && shown.returnedReason ? (
