@@ -5,10 +5,10 @@
  */
 import path from 'node:path';
 import { fileURLToPath } from 'node:url';
-import { buildIsCurrent, ensureBuild } from './support/build.mjs';
+import { ensureBuildBesideInstallation } from './support/build.mjs';
 import { CHROMIUM_NAMES } from './support/chromium.mjs';
+import { withoutInstallationSettings } from './support/environment.mjs';
 import { ensureNodeModules, ensureProgram, findProgram } from './support/packages.mjs';
-import { isRunning, readJson } from './support/processes.mjs';
 import { countCheck, countTests } from './support/test-runs.mjs';
 import { startThrowAwayDatabase } from './support/throw-away-database.mjs';
 
@@ -67,33 +67,14 @@ async function startDatabaseOnce() {
   database = await startThrowAwayDatabase(root);
 }
 
-/** The environment of a run: without the settings of an installation that this machine may have. */
+/** The environment of a run. */
 function testEnvironment() {
-  const env = { ...process.env, VITE_CONFIG_NATIVE_IGNORE_WARNING: 'true' };
-  for (const name of [
-    'DATABASE_URL',
-    'DATABASE_OWNER_URL',
-    'SMTP_URL',
-    'PORT',
-    'STEPWELL_DEMO',
-    'STEPWELL_URL',
-  ]) {
-    delete env[name];
-  }
+  const env = { ...withoutInstallationSettings(process.env), VITE_CONFIG_NATIVE_IGNORE_WARNING: 'true' };
   if (database) {
     const { port, password, pid } = database;
     env.STEPWELL_TEST_DATABASE = JSON.stringify({ port, password, pid });
   }
   return env;
-}
-
-/** The browser tests serve the same build as the start script; one that is served now must not be replaced. */
-async function ensureBuildForTests() {
-  const holder = readJson(path.join(root, '.data', 'run', 'start.json'));
-  if (holder && isRunning(holder) && !buildIsCurrent(root)) {
-    throw new Error('Stepwell runs from this folder with an older build. Stop it, and test again.');
-  }
-  await ensureBuild(root, { say, children, log: path.join(logFolder, 'build.log') });
 }
 
 async function runPart(part, filters) {
@@ -113,7 +94,7 @@ async function runPart(part, filters) {
       log: path.join(logFolder, 'apt.log'),
       find,
     });
-    await ensureBuildForTests();
+    await ensureBuildBesideInstallation(root, { say, children, log: path.join(logFolder, 'build.log') });
   }
   say(part === 'database' ? '\nDatabase tests' : '\nBrowser tests');
   add(await countTests(root, `vitest.${part}.config.ts`, filters, { env: testEnvironment(), children, say }));

@@ -32,8 +32,9 @@ async function untilItAnswers(child, port) {
  * @param root the project's folder
  * @param env its environment: DATABASE_URL, PORT, NEXTAUTH_SECRET …
  * @param options.isDevelopment the development server instead of the production build
+ * @param options.folder where the build stands, when it is not the project's
  */
-export async function startWeb(root, env, { isDevelopment = false } = {}) {
+export async function startWeb(root, env, { isDevelopment = false, folder = root } = {}) {
   const preload = path.join(root, 'scripts/support/exit-with-parent.mjs');
   const next = path.join(root, 'node_modules/next/dist/bin/next');
   const host = env.STEPWELL_HOST ? ['--hostname', env.STEPWELL_HOST] : [];
@@ -41,7 +42,7 @@ export async function startWeb(root, env, { isDevelopment = false } = {}) {
     process.execPath,
     ['--import', preload, next, isDevelopment ? 'dev' : 'start', '--port', env.PORT, ...host],
     {
-      cwd: root,
+      cwd: folder,
       env: { ...env, NODE_ENV: isDevelopment ? 'development' : 'production', NEXT_TELEMETRY_DISABLED: '1' },
       prefix: 'web',
       ...(isDevelopment ? {} : { unsaid: GREETING }),

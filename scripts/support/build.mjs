@@ -1,7 +1,7 @@
 import { createHash } from 'node:crypto';
 import { existsSync, readFileSync, readdirSync, rmSync, statSync } from 'node:fs';
 import path from 'node:path';
-import { readJson, run, writeJson } from './processes.mjs';
+import { isRunning, readJson, run, writeJson } from './processes.mjs';
 
 /** What the production build is made from. */
 const SOURCES = [
@@ -65,4 +65,13 @@ export async function ensureBuild(root, { say, children, log }) {
     throw new Error(`The build failed.${error.tail}`, { cause: error });
   }
   writeJson(stampFile(root), { sources: digest, builtAt: new Date().toISOString() });
+}
+
+/** Builds when needed, for tests and the bench; a build that the start command serves now must not be replaced. */
+export async function ensureBuildBesideInstallation(root, options) {
+  const holder = readJson(path.join(root, '.data', 'run', 'start.json'));
+  if (holder && isRunning(holder) && !buildIsCurrent(root)) {
+    throw new Error('Stepwell runs from this folder with an older build. Stop it, and try again.');
+  }
+  await ensureBuild(root, options);
 }

@@ -4,7 +4,7 @@ import path from 'node:path';
 import { databasePlaces, findRunningDatabase, startDatabase, testServerStatements } from './mariadb.mjs';
 import { identify, isRunning, readJson, stopProcess, writeJson } from './processes.mjs';
 
-/** Nothing here must survive a power cut: the whole server is thrown away. */
+/** Nothing of a test must survive a power cut: the whole server is thrown away. */
 const FAST = [
   '--innodb-flush-log-at-trx-commit=0',
   '--innodb-doublewrite=0',
@@ -31,9 +31,14 @@ async function sweep(dataFolder) {
  * Starts an empty MariaDB of its own, on a free port, in a folder of its own; gone after `stop`, and at the latest
  * when this process exits.
  * @param root the project's folder
- * @returns port and password of the accounts stepwell_test_admin (may do everything) and stepwell_test_app, and `stop`
+ * @param options.statements makes from the password the statements that make its accounts; those of tests unless told
+ * @param options.settings options of the server; unless told those that make tests fast, and a power cut deadly
+ * @returns its port, the password of its accounts (in tests stepwell_test_admin, who may do everything, and stepwell_test_app), and `stop`
  */
-export async function startThrowAwayDatabase(root) {
+export async function startThrowAwayDatabase(
+  root,
+  { statements = testServerStatements, settings = FAST } = {},
+) {
   const dataFolder = path.join(root, '.data');
   await sweep(dataFolder);
   const folder = path.join(dataFolder, `test-${process.pid}-${randomBytes(3).toString('hex')}`);
@@ -44,8 +49,8 @@ export async function startThrowAwayDatabase(root) {
   let started;
   try {
     started = await startDatabase(databasePlaces(folder), {
-      statements: testServerStatements(password),
-      settings: FAST,
+      statements: statements(password),
+      settings,
     });
   } catch (error) {
     remove();
