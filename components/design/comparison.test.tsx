@@ -1,15 +1,8 @@
 import { render, screen, within } from '@testing-library/react';
-import { describe, expect, it, vi } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { designDefaults } from '@/lib/schemas/design-defaults';
 import { comparableDesign } from '@/lib/design/comparable-rule';
 import { Comparison, type ComparedRules } from './comparison';
-
-// The form of the choice navigates; here it only has to be a form.
-vi.mock('next/form', () => ({
-  default: ({ children, action }: { children: React.ReactNode; action: string }) => (
-    <form action={action}>{children}</form>
-  ),
-}));
 
 const design = designDefaults('levels');
 const dose = (value: string | null, isStop = false) => ({ dose: value, isStop });

@@ -1,4 +1,3 @@
-import Form from 'next/form';
 import { StaticTable } from '@/components/tables/static-table';
 import type { Column } from '@/components/tables/columns';
 import { Notice } from '@/components/ui/notice';
@@ -89,7 +88,7 @@ export function Comparison({ comparison, address }: { comparison: ComparedRules;
 
 function RuleChoice({ comparison, address }: { comparison: ComparedRules; address: string }) {
   return (
-    <Form action={address} scroll={false} className="grid gap-2" prefetch={false}>
+    <form method="get" action={`${address}#comparison`} className="grid gap-2">
       <fieldset>
         <legend className="font-semibold">Rules to compare, two or more</legend>
         <div className="flex flex-wrap gap-x-6">
@@ -112,7 +111,7 @@ function RuleChoice({ comparison, address }: { comparison: ComparedRules; addres
           Compare
         </button>
       </div>
-    </Form>
+    </form>
   );
 }
 

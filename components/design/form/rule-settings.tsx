@@ -40,7 +40,7 @@ function GainFields(settings: Settings) {
         unit={settings.unit}
         help="Per unit of probability. The best is 1/D, the inverse of the curve’s slope at the target dose; err on the large side."
       />
-      <NumberField name="design.rule.k0" label="Gain offset k0" help="Keeps early moves small; 0 for none." />
+      <NumberField name="design.rule.k0" label="Gain offset k₀" help="Keeps early moves small; 0 for none." />
       <NumberField
         name="design.rule.gamma"
         label="Gain exponent γ"
@@ -94,7 +94,7 @@ function JosephFields({ unit, isRange }: Settings) {
     <>
       <NumberField
         name="design.rule.slope"
-        label="Probit slope β_P"
+        label="Probit slope"
         unit={`per ${unit}`}
         help="The slope of a probit curve at the target dose, not of the curve itself: D divided by φ(Φ⁻¹(Γ))."
       />
