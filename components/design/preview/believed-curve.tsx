@@ -6,10 +6,8 @@ import { FieldFrame, describedBy } from '@/components/forms/field-frame';
 import { Button } from '@/components/ui/button';
 import type { Design } from '@/lib/schemas/design';
 import { unitText } from '@/lib/schemas/units';
-import { WordsList } from '../words-list';
-import { adviceInWords } from './advice-words';
 import { impliedBelief, readBelief, type BeliefField, type TypedBelief } from './belief';
-import { CurveFigure } from './curve-figure';
+import { Believed } from './believed';
 
 /**
  * What the design does if the response runs as someone believes: the curve through two believed points, and the advice.
@@ -32,7 +30,7 @@ export function BelievedCurve({ design }: { design: Design }) {
   );
   const unit = unitText(design.unit);
   return (
-    <div className="@container grid gap-4">
+    <div className="grid gap-4">
       <p className="max-w-prose text-sm text-ink-soft">
         {typed === null
           ? 'The curve this rule’s settings take for granted, with the target at the middle of the doses. Type your own belief: it is a preview and is not stored.'
@@ -63,31 +61,6 @@ export function BelievedCurve({ design }: { design: Design }) {
         </div>
       </div>
       {read.ok ? <Believed design={design} curve={read.curve} /> : null}
-    </div>
-  );
-}
-
-function Believed({
-  design,
-  curve,
-}: {
-  design: Design;
-  curve: Extract<ReturnType<typeof readBelief>, { ok: true }>['curve'];
-}) {
-  const { items, cautions } = adviceInWords(design, curve);
-  return (
-    <div className="grid items-start gap-x-9 gap-y-4 @3xl:grid-cols-2">
-      <CurveFigure design={design} curve={curve} />
-      <div className="grid gap-4">
-        {cautions.length > 0 ? (
-          <ul className="grid gap-1.5 border-l-4 border-ochre bg-ochre-wash px-3.5 py-2.5">
-            {cautions.map((caution) => (
-              <li key={caution}>{caution}</li>
-            ))}
-          </ul>
-        ) : null}
-        <WordsList items={items} />
-      </div>
     </div>
   );
 }

@@ -6,7 +6,7 @@ import { equalDecimals } from '@/lib/design/decimal';
 import { doseText } from '@/lib/design/dose-text';
 import type { Design } from '@/lib/schemas/design';
 import { FIRST_STEPS, dosesToStepFrom } from './first-steps';
-import { FirstStepsTable } from './first-steps-table';
+import { FirstStepsTable, StepsNote } from './first-steps-table';
 
 /** The first steps in dose units from a dose the reader chooses; the starting dose at first. */
 export function StepsPreview({ design }: { design: Design }) {
@@ -37,13 +37,7 @@ export function StepsPreview({ design }: { design: Design }) {
         </span>
       </label>
       <FirstStepsTable design={design} around={around} />
-      <p className="max-w-prose text-sm text-ink-soft">
-        After none, after all: where the rule’s value would go from there after one cohort without a response,
-        and after one of responses only, before any guardrail.
-        {design.doses.kind === 'levels'
-          ? ' To change: how many such cohorts in a row change the level, and to which, guardrails included; frozen where more would be needed than remain.'
-          : ''}
-      </p>
+      <StepsNote design={design} />
     </div>
   );
 }

@@ -1,6 +1,4 @@
-import { ApproveDesignForm } from '@/components/design/approve-design-form';
-import { ReturnDesignForm } from '@/components/design/return-design-form';
-import { SubmitDesignForm } from '@/components/design/submit-design-form';
+import { ApproveDesign, ReturnDesign, SubmitDesign } from '@/components/design/act-forms';
 import { Section } from '@/components/layout/section';
 import { Notice } from '@/components/ui/notice';
 import type { DesignView, ShownDesign } from '@/lib/queries/trial/design';
@@ -25,7 +23,7 @@ export function DesignActs({
           A safety reviewer who did not propose the design approves it by signature or returns it. While it is
           in review it cannot be changed. Who submits a design signs no step of the trial.
         </p>
-        <SubmitDesignForm
+        <SubmitDesign
           key={versionId}
           trialCode={trialCode}
           versionId={versionId}
@@ -48,7 +46,7 @@ export function DesignActs({
             {shown.approve.why}
           </Notice>
         ) : shown.approve ? (
-          <ApproveDesignForm
+          <ApproveDesign
             key={shown.digest}
             version={{ trialCode, versionId, seenDigest: shown.digest, number: shown.number }}
             printedName={printedName}
@@ -58,12 +56,7 @@ export function DesignActs({
         ) : null}
         {shown.return ? (
           <div className="border-t border-line pt-4">
-            <ReturnDesignForm
-              key={versionId}
-              trialCode={trialCode}
-              versionId={versionId}
-              action={returnDesign}
-            />
+            <ReturnDesign key={versionId} trialCode={trialCode} versionId={versionId} action={returnDesign} />
           </div>
         ) : null}
       </div>

@@ -3,8 +3,9 @@ import { notFound } from 'next/navigation';
 import { Caution } from '@/components/caution/caution';
 import { Comparison } from '@/components/design/comparison';
 import { DesignInWords } from '@/components/design/design-in-words';
-import { BelievedCurve } from '@/components/design/preview/believed-curve';
-import { StepsPreview } from '@/components/design/preview/steps-preview';
+import { BelievedByDesign } from '@/components/design/preview/believed';
+import { Explore } from '@/components/design/preview/explore';
+import { FirstSteps } from '@/components/design/preview/first-steps-table';
 import { PageTitle } from '@/components/layout/page-title';
 import { Section } from '@/components/layout/section';
 import { Sheet } from '@/components/layout/sheet';
@@ -51,10 +52,14 @@ export default async function DesignPage({
       ) : null}
       <DesignInWords design={shown.design} />
       <Section title="First steps">
-        <StepsPreview design={shown.design} />
+        <Explore key={shown.versionId} what="steps" design={shown.design}>
+          <FirstSteps design={shown.design} />
+        </Explore>
       </Section>
       <Section title="A believed curve">
-        <BelievedCurve key={shown.versionId} design={shown.design} />
+        <Explore key={shown.versionId} what="curve" design={shown.design}>
+          <BelievedByDesign design={shown.design} />
+        </Explore>
       </Section>
       {view.comparison ? (
         <Section title="What would each rule have recommended" id="comparison">
