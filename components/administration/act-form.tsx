@@ -3,24 +3,25 @@
 import { useRouter } from 'next/navigation';
 import type { z } from 'zod';
 import { ActionForm } from '@/components/forms/action-form';
+import { installationSchema, trialSchema } from '@/components/forms/fetched-schemas';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { useActionForm } from '@/components/forms/use-action-form';
 import type { ButtonVariant } from '@/components/ui/button';
 import type { ActionResult, Submission } from '@/lib/schemas/action-result';
-import { installationInputSchemas } from '@/lib/schemas/installation-inputs';
-import { trialFormSchemas } from '@/lib/schemas/trial-forms';
+import type { InstallationInputSchemas } from '@/lib/schemas/installation-inputs';
+import type { TrialFormSchemas } from '@/lib/schemas/trial-forms';
 
-/** The acts that need no entries, each with the schema its action parses with. */
+/** The acts that need no entries, each with how to fetch the schema its action parses with. */
 const SCHEMAS = {
-  'resend-invitation': installationInputSchemas['resend-invitation'],
-  'reset-by-administrator': installationInputSchemas['reset-by-administrator'],
-  'disable-person': installationInputSchemas['disable-person'],
-  'enable-person': installationInputSchemas['enable-person'],
-  'retry-mail': installationInputSchemas['retry-mail'],
-  'end-membership': trialFormSchemas['end-membership'],
+  'resend-invitation': installationSchema('resend-invitation'),
+  'reset-by-administrator': installationSchema('reset-by-administrator'),
+  'disable-person': installationSchema('disable-person'),
+  'enable-person': installationSchema('enable-person'),
+  'retry-mail': installationSchema('retry-mail'),
+  'end-membership': trialSchema('end-membership'),
 } as const;
 
-type Acts = typeof SCHEMAS;
+type Acts = Pick<InstallationInputSchemas & TrialFormSchemas, keyof typeof SCHEMAS>;
 type Input<Act extends keyof Acts> = z.input<Acts[Act]>;
 
 /**
@@ -53,7 +54,7 @@ export function ActForm<Act extends keyof Acts>({
 }) {
   const router = useRouter();
   const state = useActionForm({
-    schema: SCHEMAS[act] as unknown as z.ZodType<Input<Act>, Input<Act>>,
+    schema: SCHEMAS[act] as unknown as () => Promise<z.ZodType<Input<Act>, Input<Act>>>,
     action,
     defaultValues: values as never,
     onSaved: () => router.refresh(),

@@ -3,10 +3,13 @@
 import { useRouter } from 'next/navigation';
 import { ActionForm } from '@/components/forms/action-form';
 import { SelectField } from '@/components/forms/choice-fields';
+import { trialSchema } from '@/components/forms/fetched-schemas';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { useActionForm } from '@/components/forms/use-action-form';
 import type { ActionResult } from '@/lib/schemas/action-result';
-import { type TrialFormInput, trialFormSchemas } from '@/lib/schemas/trial-forms';
+import type { TrialFormInput } from '@/lib/schemas/trial-forms';
+
+const schema = trialSchema('add-site');
 
 /** Takes a site into the trial. */
 export function AddSiteForm({
@@ -20,7 +23,7 @@ export function AddSiteForm({
 }) {
   const router = useRouter();
   const state = useActionForm({
-    schema: trialFormSchemas['add-site'],
+    schema,
     action,
     defaultValues: { trialCode, siteId: '' },
     clearWhenSaved: true,

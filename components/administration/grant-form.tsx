@@ -4,11 +4,14 @@ import { useRouter } from 'next/navigation';
 import { useWatch } from 'react-hook-form';
 import { ActionForm } from '@/components/forms/action-form';
 import { CheckboxGroup, RadioGroup, SelectField } from '@/components/forms/choice-fields';
+import { trialSchema } from '@/components/forms/fetched-schemas';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { useActionForm } from '@/components/forms/use-action-form';
 import { ROLE_NAMES, SITE_ROLES, TRIAL_ROLES, type TrialRole } from '@/lib/policy/roles';
 import type { ActionResult } from '@/lib/schemas/action-result';
-import { type TrialFormInput, trialFormSchemas } from '@/lib/schemas/trial-forms';
+import type { TrialFormInput } from '@/lib/schemas/trial-forms';
+
+const schema = trialSchema('grant-membership');
 
 /** What each role is for, in the line below its name. */
 const ROLE_HELP: Readonly<Record<TrialRole, string>> = {
@@ -35,7 +38,7 @@ export function GrantForm({
 }) {
   const router = useRouter();
   const state = useActionForm({
-    schema: trialFormSchemas['grant-membership'],
+    schema,
     action: (input) => action({ ...input, siteIds: SITE_ROLES.includes(input.role) ? input.siteIds : [] }),
     defaultValues: { trialCode, personId: '', role: undefined, siteIds: [] },
     clearWhenSaved: true,

@@ -3,11 +3,13 @@
 import { useRouter } from 'next/navigation';
 import { ActionForm } from '@/components/forms/action-form';
 import { Checkbox } from '@/components/forms/choice-fields';
+import { installationSchema } from '@/components/forms/fetched-schemas';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { TextField } from '@/components/forms/text-field';
 import { useActionForm } from '@/components/forms/use-action-form';
 import type { ActionResult, Submission } from '@/lib/schemas/action-result';
-import { installationInputSchemas } from '@/lib/schemas/installation-inputs';
+
+const schema = installationSchema('invite-person');
 
 type Input = { email: string; printedName: string; isAdministrator: boolean } & Submission;
 
@@ -19,7 +21,7 @@ export function InviteForm({
 }) {
   const router = useRouter();
   const state = useActionForm({
-    schema: installationInputSchemas['invite-person'],
+    schema,
     action,
     defaultValues: { email: '', printedName: '', isAdministrator: false },
     clearWhenSaved: true,

@@ -3,11 +3,13 @@
 import { useRouter } from 'next/navigation';
 import { ActionForm } from '@/components/forms/action-form';
 import { SelectField } from '@/components/forms/choice-fields';
+import { installationSchema } from '@/components/forms/fetched-schemas';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { TextField } from '@/components/forms/text-field';
 import { useActionForm } from '@/components/forms/use-action-form';
 import type { ActionResult, Submission } from '@/lib/schemas/action-result';
-import { installationInputSchemas } from '@/lib/schemas/installation-inputs';
+
+const schema = installationSchema('create-site');
 
 type Input = { code: string; name: string; timeZone: string } & Submission;
 
@@ -21,7 +23,7 @@ export function SiteForm({
 }) {
   const router = useRouter();
   const state = useActionForm({
-    schema: installationInputSchemas['create-site'],
+    schema,
     action,
     defaultValues: { code: '', name: '', timeZone: '' },
     clearWhenSaved: true,

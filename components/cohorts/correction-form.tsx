@@ -2,17 +2,17 @@
 
 import { useRouter } from 'next/navigation';
 import { ActionForm } from '@/components/forms/action-form';
+import { trialSchema } from '@/components/forms/fetched-schemas';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { TextArea } from '@/components/forms/text-field';
 import { useActionForm } from '@/components/forms/use-action-form';
-import { trialFormSchemas } from '@/lib/schemas/trial-forms';
 import { formatTime } from '../ui/format-time';
 import { OutcomeMark } from '../ui/outcome-mark';
 import type { CohortWork, SubjectData, TrialAction } from './cohort-data';
 import { OutcomeFields } from './outcome-fields';
 import { useSay } from './saved-notice';
 
-const schema = trialFormSchemas['correct-outcome'];
+const schema = trialSchema('correct-outcome');
 
 /** The outcome as it stands on record. */
 function Recorded({ work, subject }: { work: CohortWork; subject: SubjectData }) {

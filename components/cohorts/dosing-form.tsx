@@ -5,16 +5,16 @@ import { useEffect } from 'react';
 import { useWatch } from 'react-hook-form';
 import { ActionForm } from '@/components/forms/action-form';
 import { DateTimeField } from '@/components/forms/date-time-field';
+import { trialSchema } from '@/components/forms/fetched-schemas';
 import { DecimalField } from '@/components/forms/number-field';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { TextArea } from '@/components/forms/text-field';
 import { useActionForm } from '@/components/forms/use-action-form';
 import { equalDecimals } from '@/lib/design/decimal';
-import { trialFormSchemas } from '@/lib/schemas/trial-forms';
 import type { CohortWork, SubjectData, TrialAction } from './cohort-data';
 import { useSay } from './saved-notice';
 
-const schema = trialFormSchemas['record-dosing'];
+const schema = trialSchema('record-dosing');
 
 /** Whether a dose as typed is a number, and another than the released one; the schema says what else is wrong. */
 function differs(typed: string, released: string): boolean {

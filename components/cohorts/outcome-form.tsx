@@ -2,14 +2,14 @@
 
 import { useRouter } from 'next/navigation';
 import { ActionForm } from '@/components/forms/action-form';
+import { trialSchema } from '@/components/forms/fetched-schemas';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { useActionForm } from '@/components/forms/use-action-form';
-import { trialFormSchemas } from '@/lib/schemas/trial-forms';
 import { afterRecord, type CohortWork, type SubjectData, type TrialAction } from './cohort-data';
 import { OutcomeFields } from './outcome-fields';
 import { useSay } from './saved-notice';
 
-const schema = trialFormSchemas['record-outcome'];
+const schema = trialSchema('record-outcome');
 
 /** Records the outcome of a dosed subject. */
 export function OutcomeForm({

@@ -2,14 +2,14 @@
 
 import { useRouter } from 'next/navigation';
 import { ActionForm } from '@/components/forms/action-form';
+import { trialSchema } from '@/components/forms/fetched-schemas';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { TextArea } from '@/components/forms/text-field';
 import { useActionForm } from '@/components/forms/use-action-form';
-import { trialFormSchemas } from '@/lib/schemas/trial-forms';
 import type { SubjectData, TrialAction } from './cohort-data';
 import { useSay } from './saved-notice';
 
-const schema = trialFormSchemas['release-slot'];
+const schema = trialSchema('release-slot');
 
 /** Gives a reserved place back, with the reason. */
 export function ReleaseSlotForm({

@@ -4,14 +4,14 @@ import { useRouter } from 'next/navigation';
 import { useWatch } from 'react-hook-form';
 import { ActionForm } from '@/components/forms/action-form';
 import { SelectField } from '@/components/forms/choice-fields';
+import { trialSchema } from '@/components/forms/fetched-schemas';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { TextField } from '@/components/forms/text-field';
 import { useActionForm } from '@/components/forms/use-action-form';
-import { trialFormSchemas } from '@/lib/schemas/trial-forms';
 import type { TrialAction } from './cohort-data';
 import { useSay } from './saved-notice';
 
-const schema = trialFormSchemas['reserve-slot'];
+const schema = trialSchema('reserve-slot');
 
 /** Reserves the lowest free place of the open cohort for a subject of one of the reader's sites. */
 export function ReserveForm({

@@ -2,13 +2,13 @@
 
 import { useRouter } from 'next/navigation';
 import { ActionForm } from '@/components/forms/action-form';
+import { trialSchema } from '@/components/forms/fetched-schemas';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { useActionForm } from '@/components/forms/use-action-form';
-import { trialFormSchemas } from '@/lib/schemas/trial-forms';
 import type { TrialAction } from './cohort-data';
 import { useSay } from './saved-notice';
 
-const schema = trialFormSchemas['resubmit-cohort'];
+const schema = trialSchema('resubmit-cohort');
 
 /** Resubmits a returned cohort once its questions are answered: the recommendation is computed anew. */
 export function ResubmitForm({

@@ -52,7 +52,7 @@ describe('recording a dosing', () => {
       submissionKey: expect.any(String),
     });
     const notice = screen.getByText(/^Recorded\. The dosing of ALD-014/);
-    expect(notice.closest('[tabindex="-1"]')).toHaveFocus();
+    await waitFor(() => expect(notice.closest('[tabindex="-1"]')).toHaveFocus());
     expect(screen.queryByRole('form', { name: 'Record the dosing of ALD-014' })).toBeNull();
   });
 

@@ -9,12 +9,7 @@ import { SubmitButton } from '@/components/forms/submit-button';
 import { TextArea, TextField } from '@/components/forms/text-field';
 import { useActionForm } from '@/components/forms/use-action-form';
 import type { ActionResult } from '@/lib/schemas/action-result';
-import {
-  decisionInput,
-  type PacketReference,
-  type SignChoice,
-  signDecisionFormSchema,
-} from '@/lib/schemas/sign-decision-form';
+import { decisionInput, type PacketReference, type SignChoice } from '@/lib/schemas/sign-decision-input';
 import type { TrialFormInput } from '@/lib/schemas/trial-forms';
 
 /** A decision as the form offers it. */
@@ -43,7 +38,7 @@ export function DecisionForm({
 }) {
   const router = useRouter();
   const state = useActionForm({
-    schema: signDecisionFormSchema,
+    schema: () => import('@/lib/schemas/sign-decision-form').then((module) => module.signDecisionFormSchema),
     action: (form) => action(decisionInput(packet, form)),
     defaultValues: {
       choice: decisions[0]?.choice ?? 'return',

@@ -4,13 +4,14 @@ import { useRouter } from 'next/navigation';
 import { useWatch } from 'react-hook-form';
 import { ActionForm } from '@/components/forms/action-form';
 import { RadioGroup } from '@/components/forms/choice-fields';
+import { trialSchema } from '@/components/forms/fetched-schemas';
 import { PasswordField } from '@/components/forms/password-field';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { TextArea, TextField } from '@/components/forms/text-field';
-import { type ActionFormOptions, useActionForm } from '@/components/forms/use-action-form';
-import { trialFormSchemas } from '@/lib/schemas/trial-forms';
+import { type FormAction, useActionForm } from '@/components/forms/use-action-form';
+import type { TrialFormSchemas } from '@/lib/schemas/trial-forms';
 
-const schema = trialFormSchemas['sign-lift'];
+const schema = trialSchema('sign-lift');
 
 /** Signing the lifting of a halt, with the plan for the open cohort. */
 export function LiftForm({
@@ -30,7 +31,7 @@ export function LiftForm({
   /** Signatures of others that stand on each plan. */
   standing: Readonly<Record<'continue' | 'close-short', number>>;
   quorum: number;
-  action: ActionFormOptions<typeof schema, unknown>['action'];
+  action: FormAction<TrialFormSchemas['sign-lift'], unknown>;
 }) {
   const router = useRouter();
   const state = useActionForm({

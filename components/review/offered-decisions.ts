@@ -1,6 +1,6 @@
 import { doseText } from '@/lib/design/dose-text';
 import type { Design } from '@/lib/schemas/design';
-import type { SignChoice } from '@/lib/schemas/sign-decision-form';
+import type { SignChoice } from '@/lib/schemas/sign-decision-input';
 import type { OfferedDecision } from './decision-form';
 import { isCurrent } from './packet-words';
 

@@ -1,10 +1,6 @@
 import { z } from 'zod';
-import type { TrialFormInput } from './trial-forms';
+import { SIGN_CHOICES } from './sign-decision-input';
 import { credentialsSchema, TEXT_LIMITS } from './trial-inputs';
-
-/** The choices of the decision form; the doses themselves are chosen under `lower`. */
-export const SIGN_CHOICES = ['recommended', 'lower', 'return', 'stop'] as const;
-export type SignChoice = (typeof SIGN_CHOICES)[number];
 
 /**
  * The decision as a reviewer fills it in: one choice, the lower dose and the reason where the choice asks for them, and
@@ -31,32 +27,3 @@ export const signDecisionFormSchema = z
   });
 
 export type SignDecisionForm = z.input<typeof signDecisionFormSchema>;
-
-/** What a packet's signature is put to. */
-export interface PacketReference {
-  readonly trialCode: string;
-  readonly recommendationId: string;
-  readonly seenDigest: string;
-  /** The recommended dose, or null where the recommendation is to stop. */
-  readonly recommended: string | null;
-}
-
-/** The command's input from the form. */
-export function decisionInput(
-  packet: PacketReference,
-  form: SignDecisionForm & { submissionKey: string },
-): TrialFormInput<'sign-recommendation'> {
-  const { choice, email, password, submissionKey } = form;
-  const isRelease = choice === 'recommended' || choice === 'lower';
-  return {
-    trialCode: packet.trialCode,
-    recommendationId: packet.recommendationId,
-    seenDigest: packet.seenDigest,
-    decision: isRelease ? 'release' : choice,
-    dose: choice === 'recommended' ? packet.recommended : choice === 'lower' ? form.dose : null,
-    reason: form.reason.trim() === '' || choice === 'recommended' ? null : form.reason,
-    email,
-    password,
-    submissionKey,
-  };
-}
