@@ -31,7 +31,9 @@ export function StaticTable<Key extends string>({
   if (rows.length === 0 && empty) return empty;
   const decimals = columns.map((column) => decimalsOfColumn(column, rows));
   return (
-    <div className={stacked ? '' : 'frame-scroll'}>
+    <div
+      {...(stacked ? {} : { className: 'frame-scroll', role: 'group', 'aria-label': caption, tabIndex: 0 })}
+    >
       <table role="table" className="w-full border-collapse">
         <caption className={captionShown ? 'pb-2 text-left font-semibold' : 'sr-only'}>{caption}</caption>
         <thead role="rowgroup" className={headerHidden ? 'sr-only' : stacked ? 'max-md:sr-only' : undefined}>

@@ -84,8 +84,10 @@ describe('the form of a design', { timeout: SLOW }, () => {
   it('names levels that do not increase at the level, and takes the word back when another level mends it', async () => {
     const { retype, field, form } = show();
     await retype('Level 3', '15');
+    await new Promise((done) => setTimeout(done, 400));
     expect(field('Level 3')).not.toHaveAttribute('aria-invalid');
     await retype('Level 2', '18');
+    expect(await form.findByText(/Level 3, 15, is not above level 2, 18/)).toBeInTheDocument();
     await retype('Level 3', '17');
     expect(await form.findByText(/Level 3, 17, is not above level 2, 18/)).toBeInTheDocument();
     expect(field('Level 3')).toHaveAttribute('aria-invalid', 'true');
@@ -178,7 +180,7 @@ describe('the form of a design', { timeout: SLOW }, () => {
   });
 
   it('keeps everything typed when the server refuses, and shows the sentence at the field', async () => {
-    const { retype, field, save } = show(onLevels, {
+    const { retype, field, save, form } = show(onLevels, {
       ok: false,
       code: 'invalid',
       message: 'Not saved. One entry needs a change.',
@@ -188,7 +190,14 @@ describe('the form of a design', { timeout: SLOW }, () => {
     await save();
     expect(await screen.findByRole('alert')).toHaveTextContent('Not saved. One entry needs a change.');
     expect(field('Gain constant c, ln mg')).toHaveValue('7.25');
-    expect(field('Gain constant c, ln mg')).toHaveAccessibleDescription(/The server’s own sentence/);
+    const refused = () => field('Gain constant c, ln mg');
+    expect(refused()).toHaveAccessibleDescription(/The server’s own sentence/);
+    // A change elsewhere is checked meanwhile, and leaves the server's sentence standing.
+    await retype('Target probability Γ', '2');
+    expect(await form.findByText(/The target response probability Γ is 2/)).toBeInTheDocument();
+    expect(refused()).toHaveAccessibleDescription(/The server’s own sentence/);
+    await retype('Gain constant c, ln mg', '7');
+    await waitFor(() => expect(refused()).not.toHaveAttribute('aria-invalid'));
   });
 });
 

@@ -26,7 +26,7 @@ export interface FirstStep {
 function moveText(design: Design, { cohorts, to, stops }: RunAhead): string {
   if (cohorts === null) return stops ? 'stops first' : 'frozen';
   if (to === null) return `${cohorts}, all closed`;
-  return `${cohorts}, to ${doseNumber(design, to)}`;
+  return `${cohorts}, to ${doseNumber(design, to)}`.replaceAll(' ', '\u00a0');
 }
 
 function doseNumber(design: Design, dose: Dose): string {
