@@ -83,15 +83,15 @@ describe('the form of a design', { timeout: SLOW }, () => {
 
   it('names levels that do not increase at the level, and takes the word back when another level mends it', async () => {
     const { retype, field, form } = show();
-    await retype('Level 3', '15');
+    await retype('Level 3', '25');
     await new Promise((done) => setTimeout(done, 400));
     expect(field('Level 3')).not.toHaveAttribute('aria-invalid');
-    await retype('Level 2', '18');
-    expect(await form.findByText(/Level 3, 15, is not above level 2, 18/)).toBeInTheDocument();
-    await retype('Level 3', '17');
-    expect(await form.findByText(/Level 3, 17, is not above level 2, 18/)).toBeInTheDocument();
+    await retype('Level 2', '28');
+    expect(await form.findByText(/Level 3, 25, is not above level 2, 28/)).toBeInTheDocument();
+    await retype('Level 3', '27');
+    expect(await form.findByText(/Level 3, 27, is not above level 2, 28/)).toBeInTheDocument();
     expect(field('Level 3')).toHaveAttribute('aria-invalid', 'true');
-    await retype('Level 2', '16');
+    await retype('Level 2', '26');
     await waitFor(() => expect(field('Level 3')).not.toHaveAttribute('aria-invalid'));
   });
 
