@@ -44,7 +44,7 @@ export function ruleItems(rule: RuleSettings, design: Pick<Design, 'scale' | 'un
     case 'kesten':
       return [
         { term: 'Gain constant c', detail: `${rule.c} ${unit}` },
-        { term: 'Gain offset k₀', detail: String(rule.k0) },
+        { term: 'Gain offset k0', detail: String(rule.k0) },
         { term: 'Gain exponent γ', detail: String(rule.gamma) },
         ...carryItems(rule),
       ];

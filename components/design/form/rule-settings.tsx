@@ -40,7 +40,7 @@ function GainFields(settings: Settings) {
         unit={settings.unit}
         help="Per unit of probability. The best is 1/D, the inverse of the curve’s slope at the target dose; err on the large side."
       />
-      <NumberField name="design.rule.k0" label="Gain offset k₀" help="Keeps early moves small; 0 for none." />
+      <NumberField name="design.rule.k0" label="Gain offset k0" help="Keeps early moves small; 0 for none." />
       <NumberField
         name="design.rule.gamma"
         label="Gain exponent γ"
@@ -48,7 +48,7 @@ function GainFields(settings: Settings) {
           <>
             The step sizes a<sub>k</sub> = c/(k + k<sub>0</sub>)<sup>γ</sup> must add up to infinity (Σa
             <sub>k</sub> = ∞), so that no distance is too far, and their squares must not (Σa<sub>k</sub>²
-            &lt; ∞), so that the steps settle: ½ &lt; γ ≤ 1.
+            &lt; ∞), so that the steps settle: 1/2 &lt; γ ≤ 1.
           </>
         }
       />
