@@ -122,7 +122,7 @@ export default async function MailPage({
               hiddenAtFirst: mails.every(({ lastError }) => lastError === null),
             },
             ...(mails.some((mail) => mail.state === 'dead')
-              ? [{ key: 'acts' as const, header: '', acts: true }]
+              ? [{ key: 'acts' as const, header: 'Act', acts: true }]
               : []),
           ]}
           rows={mails.map((mail) => ({

@@ -35,7 +35,7 @@ function Team({ trial }: { trial: TrialTeamPage }) {
         { key: 'sites', header: 'Sites' },
         { key: 'granted', header: 'Granted', kind: 'day' },
         { key: 'ended', header: 'Ended', kind: 'day' },
-        { key: 'acts', header: '', acts: true },
+        { key: 'acts', header: 'Act', acts: true },
       ]}
       rows={trial.members.map((member) => ({
         id: member.personId,
