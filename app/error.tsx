@@ -1,13 +1,15 @@
 'use client';
 
-import { Button } from '@/components/ui/button';
-
 /** The reference under which the server logged the error, when it did. */
 function referenceOf(error: unknown): string | undefined {
   return error instanceof Error && 'digest' in error && typeof error.digest === 'string'
     ? error.digest
     : undefined;
 }
+
+/** The look of a button (components/ui/button.tsx), whose code every page would load for this one. */
+const BUTTON =
+  'min-h-11 rounded-sm border-[1.5px] border-water px-5 py-2 font-semibold text-water hover:bg-water-wash hover:text-water-deep';
 
 /** Shown when a page could not be made: what to do, and the reference to quote. */
 export default function ErrorPage({ error, retry }: { error: unknown; retry: () => void }) {
@@ -25,7 +27,9 @@ export default function ErrorPage({ error, retry }: { error: unknown; retry: () 
         </p>
       ) : null}
       <p className="mt-4">
-        <Button onClick={() => retry()}>Try again</Button>
+        <button type="button" onClick={() => retry()} className={BUTTON}>
+          Try again
+        </button>
       </p>
     </main>
   );

@@ -1,6 +1,5 @@
 'use client';
 
-import { signIn } from 'next-auth/react';
 import { useState } from 'react';
 import { ActionForm } from '@/components/forms/action-form';
 import { PasswordField } from '@/components/forms/password-field';
@@ -20,6 +19,7 @@ interface DemoAccount {
 }
 
 async function prove({ email, password }: { email: string; password: string }): Promise<ActionResult> {
+  const { signIn } = await import('next-auth/react');
   const answer = await signIn('credentials', { email, password, redirect: false, callbackUrl: '/today' });
   if (answer?.ok && !answer.error) return { ok: true, value: undefined };
   return {

@@ -3,7 +3,8 @@
 import { useRouter } from 'next/navigation';
 import { useWatch } from 'react-hook-form';
 import { ActionForm } from '@/components/forms/action-form';
-import { CheckboxGroup, RadioGroup, SelectField } from '@/components/forms/choice-fields';
+import { CheckboxGroup } from '@/components/forms/checkbox-fields';
+import { RadioGroup, SelectField } from '@/components/forms/choice-fields';
 import { trialSchema } from '@/components/forms/fetched-schemas';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { useActionForm } from '@/components/forms/use-action-form';

@@ -2,7 +2,7 @@
 
 import { useRouter } from 'next/navigation';
 import { ActionForm } from '@/components/forms/action-form';
-import { Checkbox } from '@/components/forms/choice-fields';
+import { Checkbox } from '@/components/forms/checkbox-fields';
 import { installationSchema } from '@/components/forms/fetched-schemas';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { TextField } from '@/components/forms/text-field';

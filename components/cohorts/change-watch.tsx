@@ -1,35 +1,16 @@
 'use client';
 
-import { useQuery } from '@tanstack/react-query';
-import { useRouter } from 'next/navigation';
-import { useTransition } from 'react';
-import { Button } from '../ui/button';
-import { Notice } from '../ui/notice';
+import { useEffect, useState } from 'react';
+import type { ChangeQuestion } from './change-question';
+import { NoConnection } from './no-connection';
 
 /** How often a page in view asks whether its cohort has changed, in milliseconds. */
 const EVERY = 20_000;
 
-class AnswerError extends Error {
-  readonly status: number;
-
-  constructor(status: number) {
-    super(`The server answered ${status}.`);
-    this.status = status;
-  }
-}
-
-async function fetchRevision(trialCode: string, number: number, signal: AbortSignal): Promise<string> {
-  const address = `/api/trials/${encodeURIComponent(trialCode)}/cohorts/${number}`;
-  const response = await fetch(address, { signal, headers: { accept: 'application/json' } });
-  if (!response.ok) throw new AnswerError(response.status);
-  // The schema library is fetched with the first question asked, not with the page.
-  const { cohortRevisionSchema } = await import('@/lib/schemas/cohort-revision');
-  return cohortRevisionSchema.parse(await response.json()).revision;
-}
-
 /**
  * Says when somebody else has changed the cohort that is shown, and fetches the new state only when asked to: nothing
- * typed is lost. It says as well when the server cannot be reached.
+ * typed is lost. It says as well when the server cannot be reached. What it takes to ask is loaded with the first question,
+ * not with the page.
  * @param revision the digest of what is shown
  */
 export function ChangeWatch({
@@ -41,45 +22,32 @@ export function ChangeWatch({
   cohortNumber: number;
   revision: string;
 }) {
-  const router = useRouter();
-  const [isRefreshing, startRefreshing] = useTransition();
-  const { data, error } = useQuery({
-    queryKey: ['cohort-revision', trialCode, cohortNumber, revision],
-    queryFn: ({ signal }) => fetchRevision(trialCode, cohortNumber, signal),
-    initialData: revision,
-    refetchInterval: EVERY,
-    retry: 1,
-  });
-  const hasChanged = data !== revision;
-  const isOut = error instanceof AnswerError && (error.status === 401 || error.status === 404);
+  const [Question, setQuestion] = useState<typeof ChangeQuestion | 'out-of-reach' | null>(null);
+  useEffect(() => {
+    let gone = false;
+    let timer: number;
+    const load = async () => {
+      try {
+        const loaded = await import('./change-question');
+        if (!gone) setQuestion(() => loaded.ChangeQuestion);
+      } catch {
+        // Without a connection the code cannot be had; it is said, and tried again.
+        if (gone) return;
+        setQuestion('out-of-reach');
+        timer = window.setTimeout(load, EVERY);
+      }
+    };
+    timer = window.setTimeout(load, EVERY);
+    return () => {
+      gone = true;
+      window.clearTimeout(timer);
+    };
+  }, []);
   return (
-    <div role="status" className="print:hidden">
-      {hasChanged ? (
-        <div className="mb-5">
-          <Notice kind="waiting" title="Somebody else changed this cohort." live={false}>
-            <p className="mb-2">What is shown here is older. What you have typed stays.</p>
-            <Button
-              small
-              pending={isRefreshing}
-              pendingLabel="Fetching…"
-              onClick={() => startRefreshing(() => router.refresh())}
-            >
-              Show the new state
-            </Button>
-          </Notice>
-        </div>
-      ) : error ? (
-        <div className="mb-5">
-          <Notice
-            kind="waiting"
-            title={isOut ? 'You are signed out, or may no longer see this.' : 'No connection to the server.'}
-            live={false}
-          >
-            {isOut
-              ? 'What is shown here may be out of date. Sign in in another tab to go on; what you have typed stays.'
-              : 'What is shown here may be out of date. A record is kept only when the page says “Recorded”.'}
-          </Notice>
-        </div>
+    <div role="status" className="print:hidden [&>*]:mb-5">
+      {Question === 'out-of-reach' ? <NoConnection /> : null}
+      {Question !== null && Question !== 'out-of-reach' ? (
+        <Question trialCode={trialCode} cohortNumber={cohortNumber} revision={revision} every={EVERY} />
       ) : null}
     </div>
   );

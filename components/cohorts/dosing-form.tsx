@@ -10,16 +10,22 @@ import { DecimalField } from '@/components/forms/number-field';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { TextArea } from '@/components/forms/text-field';
 import { useActionForm } from '@/components/forms/use-action-form';
-import { equalDecimals } from '@/lib/design/decimal';
 import type { CohortWork, SubjectData, TrialAction } from './cohort-data';
 import { useSay } from './saved-notice';
 
 const schema = trialSchema('record-dosing');
 
+/** A decimal without the zeros that say nothing: "012.50" is "12.5". Exact, and without the library of decimals. */
+const withoutIdleZeros = (text: string): string =>
+  text
+    .replace(/^0+(?=\d)/, '')
+    .replace(/(\.\d*?)0+$/, '$1')
+    .replace(/\.$/, '');
+
 /** Whether a dose as typed is a number, and another than the released one; the schema says what else is wrong. */
 function differs(typed: string, released: string): boolean {
   const text = typed.trim();
-  return /^\d{1,20}(\.\d{1,20})?$/.test(text) && !equalDecimals(text, released);
+  return /^\d{1,20}(\.\d{1,20})?$/.test(text) && withoutIdleZeros(text) !== withoutIdleZeros(released);
 }
 
 /** Records that a subject was dosed: when, and the dose really given, with the reason where it is another one. */

@@ -1,8 +1,7 @@
 import type { ReactNode } from 'react';
 import type { CohortActions, CohortWork, PlaceData } from './cohort-data';
-import { ReserveForm } from './reserve-form';
+import { LoadedReserveForm, LoadedSubjectActs } from './loaded-forms';
 import { SavedNotice } from './saved-notice';
-import { SubjectActs } from './subject-acts';
 import { hasWindowEnded, SubjectFacts, SubjectStanding } from './subject-facts';
 
 /** What the reader may reserve: their sites, and why not now. */
@@ -88,7 +87,7 @@ export function PlaceList({
               heading={<span className="text-ink-soft">{isOpen ? 'free' : 'not used'}</span>}
             >
               {reserve && each.place === firstFree ? (
-                <ReserveForm
+                <LoadedReserveForm
                   trialCode={work.trialCode}
                   cohortId={cohortId}
                   sites={reserve.sites}
@@ -115,7 +114,7 @@ export function PlaceList({
             aside={<SubjectStanding subject={subject} readAt={work.readAt} />}
           >
             <SubjectFacts work={work} subject={subject} />
-            <SubjectActs
+            <LoadedSubjectActs
               key={subject.id}
               work={work}
               subject={subject}

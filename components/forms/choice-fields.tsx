@@ -52,7 +52,8 @@ export function SelectField(
   );
 }
 
-function Group({
+/** The frame around choices that answer one question. */
+export function ChoiceGroup({
   elementId,
   label,
   labelHidden,
@@ -84,9 +85,17 @@ function Group({
 
 const radioClass =
   'mt-0.75 size-4.5 flex-none cursor-pointer appearance-none rounded-full border-2 border-ink-soft bg-paper checked:border-[5.5px] checked:border-water disabled:cursor-not-allowed disabled:border-line print:appearance-auto';
-const checkboxClass = 'mt-0.75 size-4.5 flex-none cursor-pointer accent-water disabled:cursor-not-allowed';
 
-function ChoiceLine({ choice, control, plain }: { choice: Choice; control: ReactNode; plain: boolean }) {
+/** One choice: its control, its label, and the line below it. */
+export function ChoiceLine({
+  choice,
+  control,
+  plain,
+}: {
+  choice: Choice;
+  control: ReactNode;
+  plain: boolean;
+}) {
   return (
     <label
       className={`flex gap-2.5 border-line ${plain ? 'py-1' : 'border-b py-2.25 last:border-b-0'} ${
@@ -115,7 +124,7 @@ export function RadioGroup(props: FieldProps & { choices: Choice[]; inline?: boo
   const { register } = useFormContext();
   const error = useFieldError(name);
   return (
-    <Group {...{ elementId, label, labelHidden, optional, help, error }}>
+    <ChoiceGroup {...{ elementId, label, labelHidden, optional, help, error }}>
       <div className={inline ? 'flex flex-wrap gap-x-6' : ''}>
         {choices.map((choice) => (
           <ChoiceLine
@@ -134,73 +143,6 @@ export function RadioGroup(props: FieldProps & { choices: Choice[]; inline?: boo
           />
         ))}
       </div>
-    </Group>
-  );
-}
-
-/** Any number of choices; the value is the array of those ticked. */
-export function CheckboxGroup(props: FieldProps & { choices: Choice[] }) {
-  const { name, label, help, optional, labelHidden, disabled, choices } = props;
-  const elementId = useFieldFacts(name, { label });
-  const { register } = useFormContext();
-  const error = useFieldError(name);
-  return (
-    <Group {...{ elementId, label, labelHidden, optional, help, error }}>
-      {choices.map((choice) => (
-        <ChoiceLine
-          key={choice.value}
-          choice={choice}
-          plain
-          control={
-            <input
-              {...register(name)}
-              type="checkbox"
-              value={choice.value}
-              disabled={disabled || Boolean(choice.disabledReason)}
-              className={checkboxClass}
-            />
-          }
-        />
-      ))}
-    </Group>
-  );
-}
-
-/** A statement that is true or not; the value is a boolean. */
-export function Checkbox({ name, label, help, disabled }: Omit<FieldProps, 'optional' | 'labelHidden'>) {
-  const elementId = useFieldFacts(name, { label });
-  const { register } = useFormContext();
-  const error = useFieldError(name);
-  return (
-    <div className="grid gap-1">
-      <label className="flex gap-2.5">
-        <input
-          {...register(name)}
-          id={elementId}
-          type="checkbox"
-          disabled={disabled}
-          className={checkboxClass}
-          {...describedBy(elementId, help, error)}
-        />
-        <span>{label}</span>
-      </label>
-      {help ? (
-        <p id={`${elementId}-help`} className="pl-7 text-sm text-ink-soft">
-          {help}
-        </p>
-      ) : null}
-      <FieldError elementId={elementId} error={error} />
-    </div>
-  );
-}
-
-/** The sentence that refuses a list as a whole ("levels must increase"), above or below its rows. */
-export function GroupError({ name, label }: { name: string; label: string }) {
-  const elementId = useFieldFacts(name, { label });
-  const error = useFieldError(name);
-  return (
-    <div id={elementId} tabIndex={-1}>
-      <FieldError elementId={elementId} error={error} />
-    </div>
+    </ChoiceGroup>
   );
 }

@@ -8,8 +8,6 @@ export interface FieldFacts {
   label: string;
   /** Emptied after every answer of the server, and never kept. */
   secret?: boolean;
-  /** A number field: its value is a number, or the text that could not be read as one. */
-  number?: boolean;
   /** Why a text in it cannot be read as its value, as a sentence; null when it can. Keep the function between renders. */
   unreadable?: (text: string) => string | null;
   /** What an empty field is sent as; left out, it is sent as empty text. */
@@ -41,16 +39,13 @@ export function fieldId(formId: string, name: string): string {
 }
 
 /** Tells the form about a field while it is on the page; returns the field's element id. */
-export function useFieldFacts(
-  name: string,
-  { label, secret, number, unreadable, ...rest }: FieldFacts,
-): string {
+export function useFieldFacts(name: string, { label, secret, unreadable, ...rest }: FieldFacts): string {
   const { id, register } = useFormParts();
   const emptyKnown = 'emptyAs' in rest;
   const { emptyAs } = rest;
   useEffect(
-    () => register(name, { label, secret, number, unreadable, ...(emptyKnown ? { emptyAs } : {}) }),
-    [register, name, label, secret, number, unreadable, emptyKnown, emptyAs],
+    () => register(name, { label, secret, unreadable, ...(emptyKnown ? { emptyAs } : {}) }),
+    [register, name, label, secret, unreadable, emptyKnown, emptyAs],
   );
   return fieldId(id, name);
 }

@@ -1,6 +1,5 @@
 import { get, set, type FieldErrors, type FieldValues } from 'react-hook-form';
 import type { FieldFacts } from './form-context';
-import { readNumber } from './number-text';
 
 /** A field and what is wrong with it, as the summary lists it. */
 export interface FieldProblem {
@@ -27,8 +26,7 @@ export function unreadableValues(values: FieldValues, fields: KnownFields): Map<
   for (const [name, facts] of fields) {
     const value: unknown = get(values, name);
     if (typeof value !== 'string' || value === '') continue;
-    const reading = facts.number ? readNumber(value) : null;
-    const sentence = reading && !reading.ok ? reading.sentence : (facts.unreadable?.(value) ?? null);
+    const sentence = facts.unreadable?.(value) ?? null;
     if (sentence !== null) sentences.set(name, sentence);
   }
   return sentences;

@@ -22,6 +22,11 @@ function valueOf(text: string): number | string {
   return reading.ok ? reading.value : text;
 }
 
+function unreadable(text: string): string | null {
+  const reading = readNumber(text);
+  return reading.ok ? null : reading.sentence;
+}
+
 /**
  * A number, typed as text and read exactly: "1,5" is refused with a sentence instead of being guessed at.
  * The form's value is a number, '' while empty, or the text as typed while it cannot be read.
@@ -29,7 +34,7 @@ function valueOf(text: string): number | string {
 export function NumberField(props: NumberFieldProps) {
   const { name, help, optional, labelHidden, disabled, unit, emptyAs, whole } = props;
   const label = unit ? `${props.label}, ${unit}` : props.label;
-  const elementId = useFieldFacts(name, { label, number: true, emptyAs });
+  const elementId = useFieldFacts(name, { label, unreadable, emptyAs });
   const {
     field: { ref, value, onChange, onBlur },
   } = useController({ name });

@@ -2,7 +2,6 @@
 
 import { Suspense, useEffect, useRef, useState, type ReactNode } from 'react';
 import { buttonClass } from './button';
-import { SkeletonText } from './skeleton';
 
 /** Puts the focus on the first field as soon as it is there. */
 function FocusFirst({ children }: { children: ReactNode }) {
@@ -52,7 +51,13 @@ export function DisclosureHalt({
       <div className="mt-3 max-w-prose border-l-4 border-brick bg-paper px-3.5 py-3">
         {consequence ? <p className="mb-3 text-sm">{consequence}</p> : null}
         {opened ? (
-          <Suspense fallback={<SkeletonText lines={2} />}>
+          <Suspense
+            fallback={
+              <p role="status" className="text-sm text-ink-soft">
+                Loading …
+              </p>
+            }
+          >
             <FocusFirst>{children}</FocusFirst>
           </Suspense>
         ) : null}

@@ -1,7 +1,6 @@
 'use client';
 
 import dynamic from 'next/dynamic';
-import Link from 'next/link';
 import { useRouter } from 'next/navigation';
 import { useEffect } from 'react';
 import { useWatch } from 'react-hook-form';
@@ -9,6 +8,7 @@ import { ActionForm } from '@/components/forms/action-form';
 import { trialSchema } from '@/components/forms/fetched-schemas';
 import { SubmitButton } from '@/components/forms/submit-button';
 import { type FormAction, useActionForm } from '@/components/forms/use-action-form';
+import { PageLink } from '@/components/ui/page-link';
 import { SkeletonFigure } from '@/components/ui/skeleton';
 import type { Design, DesignInput } from '@/lib/schemas/design';
 import type { TrialFormSchemas } from '@/lib/schemas/trial-forms';
@@ -63,9 +63,9 @@ export function DesignForm({
         saved={
           <>
             Saved as the draft.{' '}
-            <Link href={`/trials/${trialCode}/design`} prefetch={false} className="text-water underline">
+            <PageLink href={`/trials/${trialCode}/design`} className="text-water underline">
               Read it and submit it for approval
-            </Link>
+            </PageLink>
           </>
         }
       >

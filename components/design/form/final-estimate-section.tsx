@@ -1,7 +1,8 @@
 'use client';
 
 import { useFormContext } from 'react-hook-form';
-import { Checkbox, RadioGroup } from '@/components/forms/choice-fields';
+import { Checkbox } from '@/components/forms/checkbox-fields';
+import { RadioGroup } from '@/components/forms/choice-fields';
 import { NumberField } from '@/components/forms/number-field';
 import { ESTIMATOR_TITLES } from '../estimator-titles';
 import { FormSection, Indented } from './form-section';

@@ -2,7 +2,7 @@
 
 import { useId, useState } from 'react';
 import { useFormContext, useWatch } from 'react-hook-form';
-import { GroupError } from '@/components/forms/choice-fields';
+import { GroupError } from '@/components/forms/group-error';
 import { controlClass } from '@/components/forms/control-class';
 import { describedBy, FieldError, FieldFrame, useFieldError } from '@/components/forms/field-frame';
 import { useFieldFacts } from '@/components/forms/form-context';

@@ -1,7 +1,8 @@
 'use client';
 
 import { useFormContext, useWatch } from 'react-hook-form';
-import { Checkbox, RadioGroup } from '@/components/forms/choice-fields';
+import { Checkbox } from '@/components/forms/checkbox-fields';
+import { RadioGroup } from '@/components/forms/choice-fields';
 import { NumberField } from '@/components/forms/number-field';
 import { TextArea } from '@/components/forms/text-field';
 import type { RuleName } from '@/lib/schemas/design';

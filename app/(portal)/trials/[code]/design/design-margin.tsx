@@ -1,6 +1,6 @@
-import Link from 'next/link';
 import { MarginNote } from '@/components/layout/sheet';
 import { StateChip } from '@/components/ui/chip';
+import { PageLink } from '@/components/ui/page-link';
 import { TimeInZone } from '@/components/ui/time-in-zone';
 import type { DesignVersionLine, DesignView } from '@/lib/queries/trial/design';
 
@@ -59,13 +59,13 @@ function VersionLine({ version, trialCode }: { version: DesignVersionLine; trial
         {isShown ? (
           name
         ) : (
-          <Link
+          <PageLink
             href={`/trials/${trialCode}/design?version=${number}`}
-            prefetch={false}
+
             className="text-water underline underline-offset-3"
           >
             {name}
-          </Link>
+          </PageLink>
         )}
       </span>
       <StateChip

@@ -1,6 +1,6 @@
 import { PageTitle } from '@/components/layout/page-title';
 import { Section } from '@/components/layout/section';
-import { LiftForm } from '@/components/review/lift-form';
+import { LoadedLiftForm } from '@/components/review/lift-form-loaded';
 import { Notice } from '@/components/ui/notice';
 import { TimeInZone } from '@/components/ui/time-in-zone';
 import type { LiftView, ReviewView } from '@/lib/queries/trial/review';
@@ -46,7 +46,7 @@ export function Lift({
             {view.sign.why}
           </Notice>
         ) : (
-          <LiftForm
+          <LoadedLiftForm
             trialCode={trial.trialCode}
             haltId={view.haltId}
             cohortNumber={view.cohortNumber}

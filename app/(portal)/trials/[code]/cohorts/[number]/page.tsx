@@ -4,15 +4,14 @@ import { notFound } from 'next/navigation';
 import { Caution } from '@/components/caution/caution';
 import { ChangeWatch } from '@/components/cohorts/change-watch';
 import type { CohortWork } from '@/components/cohorts/cohort-data';
+import { LoadedResubmitForm } from '@/components/cohorts/loaded-forms';
 import { PlaceList } from '@/components/cohorts/place-list';
 import { ReleasedDose } from '@/components/cohorts/released-dose';
-import { ResubmitForm } from '@/components/cohorts/resubmit-form';
 import { SavedNotice, SavedNoticeProvider } from '@/components/cohorts/saved-notice';
 import { SubjectTable } from '@/components/cohorts/subject-table';
 import { PageTitle } from '@/components/layout/page-title';
 import { Section } from '@/components/layout/section';
 import { MarginNote, Sheet } from '@/components/layout/sheet';
-import { QueryProvider } from '@/components/query-provider';
 import { StateChip } from '@/components/ui/chip';
 import { EmptyState } from '@/components/ui/empty-state';
 import { Notice } from '@/components/ui/notice';
@@ -134,9 +133,7 @@ export default async function CohortPage({ params }: Props) {
   const work: CohortWork = { trialCode, cohortNumber: cohort.number, dose, labels, readAt };
   return (
     <Sheet caution={<Caution />} margin={<Around view={view} />}>
-      <QueryProvider>
-        <ChangeWatch trialCode={view.trialCode} cohortNumber={cohort.number} revision={view.revision} />
-      </QueryProvider>
+      <ChangeWatch trialCode={view.trialCode} cohortNumber={cohort.number} revision={view.revision} />
       <PageTitle lede={view.follows}>
         <span className="flex flex-wrap items-center gap-x-3.5 gap-y-1">
           Cohort {cohort.number} <StateChip {...cohort.standing} />
@@ -169,7 +166,7 @@ export default async function CohortPage({ params }: Props) {
         <Records view={view} work={work} />
         {view.reads === 'own-sites' && view.resubmit ? (
           <Section title="Resubmit" raised>
-            <ResubmitForm
+            <LoadedResubmitForm
               trialCode={view.trialCode}
               cohortId={cohort.id}
               cohortNumber={cohort.number}
