@@ -152,19 +152,23 @@ export async function findTrial(name: TrialName, options: LoadOptions = {}): Pro
     }
   }
 
+  // A joined row repeats what it is joined to: each entity is made once.
   const entities = <T extends { id: string }>(
     model: Parameters<typeof entityOf>[0],
     alias: string,
     rows: readonly RawRow[],
-  ): Record<string, T> =>
-    byId(
-      rows.map((row) => {
-        const entity = entityOf<T & { trialId?: string }>(model, alias, row);
-        if (entity === null) return null;
-        const { trialId: _trialId, ...rest } = entity;
-        return rest as unknown as T;
-      }),
-    );
+  ): Record<string, T> => {
+    const found: Record<string, T> = {};
+    for (const row of rows) {
+      const id = row[`${alias}__id`];
+      if (typeof id === 'string' && id in found) continue;
+      const entity = entityOf<T & { trialId?: string }>(model, alias, row);
+      if (entity === null) continue;
+      const { trialId: _trialId, ...rest } = entity;
+      found[entity.id] = rest as unknown as T;
+    }
+    return found;
+  };
 
   const storedVersions = entities<Omit<DesignVersion, 'design'> & { design: string }>(
     m.DesignVersion,
