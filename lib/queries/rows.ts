@@ -23,7 +23,10 @@ export function columnsOf(model: AnyModel, alias: string, leaveOut: readonly str
 }
 
 /** Where each attribute of a model stands in a joined row, worked out once for a model and alias. */
-const places = new WeakMap<AnyModel, Map<string, readonly (readonly [attribute: string, column: string])[]>>();
+const places = new WeakMap<
+  AnyModel,
+  Map<string, readonly (readonly [attribute: string, column: string])[]>
+>();
 
 function placesOf(model: AnyModel, alias: string): readonly (readonly [string, string])[] {
   let ofModel = places.get(model);
