@@ -17,6 +17,9 @@ import {
   zonedTimeProblem,
 } from './zoned-time';
 
+/** The form's value while only a part of date and time is entered: refused by the schema as no date and time. */
+const INCOMPLETE = 'incomplete';
+
 /** The instant of a wall-clock text, or the text itself while it stands for no single instant. */
 function valueOf(text: string, chosen: string | null, zone: string, notBefore: string | undefined): string {
   if (text === '') return '';
@@ -57,9 +60,10 @@ export function DateTimeField(
   const serverNow = useServerClock(readAt ?? '1970-01-01T00:00:00Z');
 
   const held = typeof value === 'string' ? value : '';
-  const heldText = held === '' || isLocalText(held) ? held : localText(held, zone);
+  const isEmpty = held === '' || held === INCOMPLETE;
+  const heldText = isEmpty ? '' : isLocalText(held) ? held : localText(held, zone);
   const [typed, setTyped] = useState({ text: heldText, chosen: null as string | null });
-  const isTyped = valueOf(typed.text, typed.chosen, zone, notBefore) === held;
+  const isTyped = valueOf(typed.text, typed.chosen, zone, notBefore) === (isEmpty ? '' : held);
   const { text, chosen } = isTyped ? typed : { text: heldText, chosen: held };
 
   function enter(nextText: string, nextChosen: string | null) {
@@ -68,7 +72,7 @@ export function DateTimeField(
   }
 
   const reading = readZonedTime(text, zone);
-  const at = held !== '' && !isLocalText(held) ? held : null;
+  const at = !isEmpty && !isLocalText(held) ? held : null;
   return (
     <FieldFrame
       {...{ elementId, label, optional, error, labelHidden }}
@@ -94,7 +98,11 @@ export function DateTimeField(
           disabled={disabled}
           required={!optional}
           onChange={(event) => enter(event.target.value, null)}
-          onBlur={onBlur}
+          onBlur={({ target }) => {
+            const next = target.validity.badInput ? INCOMPLETE : '';
+            if (isEmpty && next !== held) onChange(next);
+            onBlur();
+          }}
           className={`${controlClass(error)} max-w-58`}
           {...describedBy(elementId, true, error)}
         />
@@ -129,7 +137,7 @@ export function DateTimeField(
           ))}
         </fieldset>
       ) : (
-        <output htmlFor={elementId} className="mt-1 block min-h-5.25 text-sm text-ink-soft">
+        <output htmlFor={elementId} className="block text-sm text-ink-soft">
           {at !== null ? formatTime(at, zone) : null}
         </output>
       )}
