@@ -57,5 +57,9 @@ export function whatFollows(state: TrialState, cohort: Cohort): string {
   ].filter(Boolean);
   if (missing.length === 0) return `Every outcome of cohort ${number} is in.`;
   const list = missing.join(', ').replace(/, ([^,]*)$/, ' and $1');
-  return `${list.charAt(0).toUpperCase()}${list.slice(1)}. With the last outcome the recommendation is computed and the safety reviewers are told.`;
+  const waiting = `${list.charAt(0).toUpperCase()}${list.slice(1)}.`;
+  if (state.trial.state === 'halted') {
+    return `${waiting} The trial is halted: outcomes and corrections go on, nobody further is reserved or dosed.`;
+  }
+  return `${waiting} With the last outcome the recommendation is computed and the safety reviewers are told.`;
 }
