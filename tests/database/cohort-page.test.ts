@@ -214,6 +214,21 @@ describe('a cohort as others read it', () => {
   });
 });
 
+describe('a dose that is not for dosing now', () => {
+  it('is said to be so to everyone while the trial is halted, and of a cohort that is signed', async () => {
+    expect((await pageOf('firstReviewer', '2')).notForDosing).toBeNull();
+    expect((await pageOf('firstReviewer', '1')).notForDosing).toBe('Cohort 1 is not open.');
+    const before = await pageOf('valk', '2');
+    await trial.run(people.secondReviewer, 'halt-trial', { reason: 'A serious event is looked into.' });
+    for (const role of ['valk', 'aldermoor', 'firstReviewer', 'statistician'] as const) {
+      expect((await pageOf(role, '2')).notForDosing, role).toMatch(/^The trial is halted/);
+    }
+    const after = await pageOf('valk', '2');
+    expect(after.revision).not.toBe(before.revision);
+    expect(after.reads === 'own-sites' && after.reserve?.why).toMatch(/^The trial is halted/);
+  });
+});
+
 describe('the team', () => {
   it('shows names, roles and sites, no address, and who may sign', async () => {
     const view = await team(await readerOf('sponsor'), CODE);

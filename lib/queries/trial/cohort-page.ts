@@ -81,6 +81,8 @@ interface CohortFacts {
     /** What was recommended, where the release is lower and the reader may know. */
     readonly recommendedText: string | null;
   };
+  /** Why nobody may be dosed at this dose now (at the reader's site, where they have one); null while subjects may. */
+  readonly notForDosing: string | null;
   readonly labels: { readonly present: string; readonly absent: string };
   readonly window: { readonly length: number; readonly unit: 'days' | 'hours' };
   /** The questions the reviewers returned the cohort with, while it is open for them. */
@@ -91,8 +93,6 @@ interface CohortFacts {
 
 interface SiteReading {
   readonly reads: 'own-sites';
-  /** Why nobody may be dosed at this dose now; null while subjects may. */
-  readonly notForDosing: string | null;
   readonly places: readonly CohortPlace[];
 }
 
@@ -188,6 +188,12 @@ function questionsOf(trial: ReaderTrial, cohort: Cohort): string[] {
     .flatMap((each) => each.reason ?? []);
 }
 
+/** The reader's own site, or for those without one any site that is active. */
+function siteAskedAbout(trial: ReaderTrial): string {
+  const active = Object.values(trial.loaded.state.sites).find((site) => site.state === 'active');
+  return trial.siteIds[0] ?? active?.siteId ?? '';
+}
+
 function factsOf(trial: ReaderTrial, cohort: Cohort, isOwn: (subject: Subject) => boolean): CohortFacts {
   const { state } = trial.loaded;
   const version = state.designVersions[cohort.designVersionId];
@@ -208,6 +214,7 @@ function factsOf(trial: ReaderTrial, cohort: Cohort, isOwn: (subject: Subject) =
       hasNext: numbers.includes(cohort.number + 1),
     },
     dose: doseOf(trial, cohort, version),
+    notForDosing: whyNoNewSubject(state, cohort, siteAskedAbout(trial)),
     labels: { present, absent },
     window: version.design.observationWindow,
     questions: questionsOf(trial, cohort),
@@ -288,7 +295,6 @@ export async function cohortPage(
   const shown = {
     ...facts,
     reads: 'own-sites' as const,
-    notForDosing: whyNoNewSubject(state, cohort, trial.siteIds[0] ?? ''),
     places: placesFor(trial, cohort, isOwn),
   };
   return {

@@ -139,17 +139,7 @@ export default async function CohortPage({ params }: Props) {
           Cohort {cohort.number} <StateChip {...cohort.standing} />
         </span>
       </PageTitle>
-      <ReleasedDose
-        dose={dose}
-        zone={zone}
-        notForDosing={
-          view.reads === 'own-sites'
-            ? view.notForDosing
-            : cohort.standing.state === 'open'
-              ? null
-              : `Cohort ${cohort.number} is not open.`
-        }
-      />
+      <ReleasedDose dose={dose} zone={zone} notForDosing={view.notForDosing} />
       <SavedNoticeProvider>
         <SavedNotice spot="cohort" />
         {view.questions.length > 0 ? (
