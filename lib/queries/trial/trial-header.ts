@@ -51,13 +51,7 @@ export async function trialHeader(reader: TrialReader, code: string): Promise<Tr
   };
 }
 
-function summaryOf({
-  design,
-  number,
-}: {
-  design: Design;
-  number: number;
-}): string {
+function summaryOf({ design, number }: { design: Design; number: number }): string {
   const unit = unitText(design.unit);
   const doses =
     design.doses.kind === 'levels'
