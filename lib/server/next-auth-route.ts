@@ -5,6 +5,7 @@ import { RefusedError } from '@/lib/errors';
 import { authOptions } from './auth-options';
 import { hidden } from './hidden';
 import { problemOf } from './problem';
+import { isReachedOverHttps } from './session-cookie';
 
 type Context = { params: Promise<{ nextauth: string[] }> };
 
@@ -23,7 +24,9 @@ export async function nextAuthRoute(request: NextRequest, context: Context): Pro
     const { nextauth } = await context.params;
     if (!SERVED[request.method]?.includes(nextauth.join('/'))) throw hidden();
     const options = authOptions();
-    refuseCallbackAddress(request, options.cookies?.callbackUrl?.name ?? '');
+    const cookieName = options.cookies?.callbackUrl?.name ?? '';
+    if (!isHttpAddress(request.cookies.get(cookieName)?.value)) return forgetCookie(request, cookieName);
+    if (!isHttpAddress(request.nextUrl.searchParams.get('callbackUrl'))) throw NO_ADDRESS;
     await refuseUnreadableBody(request);
     const handle = NextAuth(options) as (request: NextRequest, context: Context) => Promise<Response>;
     return await handle(request, context);
@@ -32,19 +35,22 @@ export async function nextAuthRoute(request: NextRequest, context: Context): Pro
   }
 }
 
-function refuseCallbackAddress(request: NextRequest, cookieName: string): void {
-  const given = [request.nextUrl.searchParams.get('callbackUrl'), request.cookies.get(cookieName)?.value];
-  for (const address of given) {
-    if (address && !isHttpAddress(address)) {
-      throw new RefusedError({
-        code: 'invalid',
-        message: 'The address to go to after signing in is not one.',
-      });
-    }
-  }
+const NO_ADDRESS = new RefusedError({
+  code: 'invalid',
+  message: 'The address to go to after signing in is not one. Load the page again.',
+});
+
+/** Takes back a cookie next-auth cannot read; the next try is without it. */
+function forgetCookie(request: NextRequest, name: string): Response {
+  const answer = problemOf(request, NO_ADDRESS, null);
+  const secure = isReachedOverHttps() ? '; Secure' : '';
+  answer.headers.append('set-cookie', `${name}=; Path=/; Max-Age=0; HttpOnly; SameSite=Lax${secure}`);
+  return answer;
 }
 
-function isHttpAddress(text: string): boolean {
+/** Whether a callback address is one, or is not given at all. */
+function isHttpAddress(text: string | null | undefined): boolean {
+  if (!text) return true;
   const base = text.startsWith('/') ? 'http://localhost' : undefined;
   return URL.canParse(text, base) && /^https?:$/.test(new URL(text, base).protocol);
 }

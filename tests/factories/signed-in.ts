@@ -16,6 +16,7 @@ export const nextHeaders = () => ({
       const value = requestAtHand.cookies.get(name);
       return value === undefined ? undefined : { name, value };
     },
+    getAll: () => [...requestAtHand.cookies].map(([name, value]) => ({ name, value })),
     set: (name: string, value: string) => requestAtHand.cookies.set(name, value),
   }),
   headers: async () => requestAtHand.headers,
