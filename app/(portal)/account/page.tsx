@@ -59,7 +59,7 @@ export default async function AccountPage() {
     <Sheet
       margin={
         <MarginNote title="Name and address">
-          <p>They stand beside what you record and sign. An administrator changes them.</p>
+          <p>They stand beside what you record and sign, so they stay as they are.</p>
         </MarginNote>
       }
     >
