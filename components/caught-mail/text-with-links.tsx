@@ -6,7 +6,12 @@
 export function TextWithLinks({ text, url }: { text: string; url: string }) {
   const pieces = text.split(/(https?:\/\/[^\s<>"]+)/);
   return (
-    <pre className="overflow-x-auto border border-line bg-stone px-4 py-4 font-mono text-xs whitespace-pre-wrap md:px-6">
+    <pre
+      tabIndex={0}
+      aria-label="The mail as text"
+      role="region"
+      className="frame-scroll border border-line bg-stone px-4 py-4 font-mono text-xs [font-variant-ligatures:none] md:px-6"
+    >
       {pieces.map((piece, index) =>
         piece.startsWith(`${url}/`) ? (
           <a key={index} href={piece}>

@@ -1,8 +1,15 @@
 'use client';
 
-import { lazy } from 'react';
+import { type ComponentProps, lazy, Suspense } from 'react';
+import type { LiftForm } from './lift-form';
+
+const Form = lazy(() => import('./lift-form').then((module) => ({ default: module.LiftForm })));
 
 /** The form that lifts a halt, loaded only by the page of a trial that is halted. */
-export const LoadedLiftForm = lazy(() =>
-  import('./lift-form').then((module) => ({ default: module.LiftForm })),
-);
+export function LoadedLiftForm(props: ComponentProps<typeof LiftForm>) {
+  return (
+    <Suspense fallback={<p className="text-ink-soft">Loading …</p>}>
+      <Form {...props} />
+    </Suspense>
+  );
+}

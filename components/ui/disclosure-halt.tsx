@@ -30,7 +30,11 @@ export function DisclosureHalt({
   const [opened, setOpened] = useState(false);
   return (
     <details
-      ref={box}
+      ref={(element) => {
+        box.current = element;
+        // A click before the page's scripts ran has opened it already, and nobody heard.
+        if (element?.open) setOpened(true);
+      }}
       className="group"
       onToggle={() => {
         if (!box.current?.open) return;

@@ -1,11 +1,14 @@
 import { chromium, type Browser, type BrowserContext, type Page } from 'playwright-core';
-import { afterAll, inject } from 'vitest';
+import path from 'node:path';
+import { afterAll, afterEach, inject } from 'vitest';
 import { CHROMIUM_FLAGS, CHROMIUM_NAMES } from '../../scripts/support/chromium.mjs';
 import { findProgram } from '../../scripts/support/packages.mjs';
 import { closeDatabase, openDatabaseAt } from '@/lib/db/connection';
 import { asOwner } from './make-database';
+import { ROOT } from './vitest-shared';
 
 let browser: Browser | undefined;
+const openPages = new Set<Page>();
 let isDatabaseOpen = false;
 
 /** The address of the installation under test, without a slash at its end. */
@@ -61,8 +64,10 @@ export async function newVisitor(
     locale: 'en-GB',
     timezoneId: 'UTC',
   });
-  context.setDefaultTimeout(20_000);
+  context.setDefaultTimeout(60_000);
   const page = await context.newPage();
+  openPages.add(page);
+  page.on('close', () => openPages.delete(page));
   const complaints: string[] = [];
   page.on('pageerror', (error) => complaints.push(`page error: ${error.message}`));
   page.on('console', (message) => {
@@ -84,7 +89,7 @@ export interface CaughtMailText {
  * Waits for a mail to an address whose subject matches, and returns the newest such mail.
  * @throws Error with the subjects that did come, after the time given
  */
-export async function waitForMail(to: string, subject: RegExp, withinMs = 20_000): Promise<CaughtMailText> {
+export async function waitForMail(to: string, subject: RegExp, withinMs = 60_000): Promise<CaughtMailText> {
   const giveUpAt = Date.now() + withinMs;
   for (;;) {
     const mails = await asOwner(inject('browserServer').database, (owner): Promise<CaughtMailText[]> =>
@@ -108,6 +113,15 @@ export async function setClockOffset(milliseconds: number): Promise<void> {
     owner.query('UPDATE installation SET clock_offset_milliseconds = ? WHERE id = 1', [milliseconds]),
   );
 }
+
+/** What the windows showed when a journey failed stands in .data/log, for whoever looks into it. */
+afterEach(async ({ task }) => {
+  if (task.result?.state !== 'fail') return;
+  for (const [index, page] of [...openPages].entries()) {
+    const file = path.join(ROOT, '.data', 'log', `failed-journey-window-${index + 1}.png`);
+    await page.screenshot({ path: file, fullPage: true });
+  }
+});
 
 afterAll(async () => {
   await browser?.close();

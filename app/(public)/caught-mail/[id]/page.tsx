@@ -13,7 +13,7 @@ import { caughtMailIdSchema, caughtMailListPath } from '@/lib/schemas/caught-mai
 /** A mail may hold a link that works once: what is opened from here does not learn where it was. */
 export const metadata: Metadata = { title: 'Caught mail', referrer: 'no-referrer' };
 
-/** One caught mail: its text, and its HTML in a frame that runs nothing and fetches nothing. */
+/** One caught mail: its HTML in a frame that runs nothing and fetches nothing, and its text. */
 export default async function CaughtMailPage({ params }: { params: Promise<{ id: string }> }) {
   const id = caughtMailIdSchema.safeParse((await params).id);
   const mail = id.success ? await caughtMail(id.data) : null;
@@ -39,19 +39,19 @@ export default async function CaughtMailPage({ params }: { params: Promise<{ id:
       }
     >
       <PageTitle>{mail.subject || 'No subject'}</PageTitle>
-      <Section title="As text">
-        <TextWithLinks text={mail.text} url={environment().url} />
-      </Section>
       {mail.html === '' ? null : (
         <Section title="As HTML">
           <iframe
             src={`/caught-mail/${mail.id}/html`}
             title="The mail as HTML"
             sandbox="allow-popups allow-popups-to-escape-sandbox"
-            className="h-[64rem] w-full border border-line"
+            className="h-[60rem] w-full border border-line"
           />
         </Section>
       )}
+      <Section title="As text">
+        <TextWithLinks text={mail.text} url={environment().url} />
+      </Section>
     </Sheet>
   );
 }
