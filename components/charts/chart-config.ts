@@ -1,5 +1,6 @@
 import type { ChartConfiguration, ChartDataset, ScaleOptionsByType } from 'chart.js';
 import type { AnnotationOptions } from 'chartjs-plugin-annotation';
+import { doseNumber } from '@/lib/design/dose-text';
 import { formatTime } from '../ui/format-time';
 import type { ChartAxis, ChartPoint, ChartRule, ChartSeries, ChartSpec } from './chart-spec';
 import type { ChartTokens } from './chart-theme';
@@ -16,6 +17,7 @@ const pointStyles = {
 /** Name of a value on an axis, and in the text that follows the pointer. */
 export function axisValue(axis: ChartAxis, value: number): string {
   if (axis.scale === 'time') return formatTime(new Date(value), 'UTC', 'day');
+  if (axis.powersOfTen) return doseNumber('powers-of-ten', value.toFixed(10).replace(/\.?0+$/, ''));
   if (axis.decimals !== undefined) return value.toFixed(axis.decimals);
   return String(Number(value.toPrecision(6)));
 }

@@ -33,6 +33,8 @@ export interface ChartAxis {
   maximum?: number;
   /** The only values named on the axis, such as the dose levels. */
   ticks?: readonly number[];
+  /** Names the values as powers of ten. */
+  powersOfTen?: boolean;
   /** Digits after the point of the names. */
   decimals?: number;
 }

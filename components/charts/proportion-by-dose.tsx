@@ -1,3 +1,4 @@
+import { doseNumber } from '@/lib/design/dose-text';
 import { ChartFigure } from './chart-figure';
 
 /** What was seen at one dose. `low` and `high` are the ends of the interval of the response proportion, 0 to 1. */
@@ -15,19 +16,21 @@ export function proportionFinding(
   target: number,
   unit: string,
   response: string,
+  notation: 'plain' | 'powers-of-ten' = 'plain',
 ): string {
   const seen = doses.filter(({ evaluable }) => evaluable > 0);
   const distance = ({ present, evaluable }: DoseProportion) => Math.abs(present / evaluable - target);
   const [first, ...others] = seen;
   if (!first) return `No outcome of ${response} yet`;
   const nearest = others.reduce((best, dose) => (distance(dose) < distance(best) ? dose : best), first);
-  return `Observed share of ${response} lies nearest the target ${target} at ${nearest.dose} ${unit} (${nearest.present} of ${nearest.evaluable})`;
+  return `Observed share of ${response} lies nearest the target ${target} at ${doseNumber(notation, nearest.dose)} ${unit} (${nearest.present} of ${nearest.evaluable})`;
 }
 
 /**
  * Response proportion by dose: a point a dose with its interval, the target as a line across.
  * @param response the trial's word for the response ("dose-limiting toxicity")
  * @param level the interval in words ("95 % Wilson intervals")
+ * @param notation how the trial prints its doses
  */
 export function ProportionByDose({
   doses,
@@ -36,6 +39,7 @@ export function ProportionByDose({
   scale,
   response,
   level,
+  notation = 'plain',
 }: {
   doses: readonly DoseProportion[];
   target: number;
@@ -43,22 +47,29 @@ export function ProportionByDose({
   scale: 'linear' | 'log';
   response: string;
   level: string;
+  notation?: 'plain' | 'powers-of-ten';
 }) {
   const seen = doses.filter(({ evaluable }) => evaluable > 0);
   const values = seen.map(({ dose }) => Number(dose));
   const share = (value: number) => value.toFixed(2);
   const lines = seen.map(
     ({ dose, present, evaluable, low, high }) =>
-      `${dose} ${unit}: ${present} of ${evaluable}, interval ${share(low)} to ${share(high)}`,
+      `${doseNumber(notation, dose)} ${unit}: ${present} of ${evaluable}, interval ${share(low)} to ${share(high)}`,
   );
   return (
     <ChartFigure
-      title={proportionFinding(doses, target, unit, response)}
+      title={proportionFinding(doses, target, unit, response, notation)}
       description={`Share of subjects with ${response} by dose, target ${target}. ${lines.join('; ')}.`}
       note={level}
       spec={{
         kind: 'points',
-        x: { title: `Dose, ${unit}`, scale, ticks: values, ...marginsAround(values, scale) },
+        x: {
+          title: `Dose, ${unit}`,
+          scale,
+          ticks: values,
+          powersOfTen: notation === 'powers-of-ten',
+          ...marginsAround(values, scale),
+        },
         y: { title: `Share of subjects with ${response}`, minimum: 0, maximum: 1, decimals: 1 },
         series: [
           {
@@ -75,7 +86,13 @@ export function ProportionByDose({
         rules: [{ at: target, label: `target ${target}` }],
       }}
       columns={[
-        { key: 'dose', header: 'Dose', unit, kind: 'number', rowHeader: true },
+        {
+          key: 'dose',
+          header: 'Dose',
+          unit,
+          kind: notation === 'plain' ? 'number' : 'text',
+          rowHeader: true,
+        },
         { key: 'present', header: response, kind: 'number' },
         { key: 'evaluable', header: 'Evaluable', kind: 'number' },
         { key: 'share', header: 'Share', kind: 'number', strong: true },
@@ -85,7 +102,7 @@ export function ProportionByDose({
       rows={doses.map(({ dose, present, evaluable, low, high }) => ({
         id: dose,
         values: {
-          dose,
+          dose: doseNumber(notation, dose),
           present,
           evaluable,
           share: evaluable > 0 ? share(present / evaluable) : null,

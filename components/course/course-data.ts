@@ -13,6 +13,8 @@ export interface CourseCohort {
 /** A trial's course of doses, as plain data. */
 export interface CourseData {
   unit: string;
+  /** How doses are printed; plain where left out. */
+  notation?: 'plain' | 'powers-of-ten';
   /** The working scale: heights are doses, or their logarithms. */
   scale: 'linear' | 'log';
   /** The dose levels, rising; or the range of a design without levels. */

@@ -1,3 +1,4 @@
+import { doseNumber } from '@/lib/design/dose-text';
 import type { CourseData } from './course-data';
 
 /** A dose that stands at the side of the drawing. `used` ones are named before others when room is short. */
@@ -49,7 +50,11 @@ export function doseTicks(data: CourseData): DoseTick[] {
   for (const { dose } of data.cohorts) texts.set(Number(dose), String(dose));
   if (data.proposed) texts.set(Number(data.proposed.dose), String(data.proposed.dose));
   return [...texts]
-    .map(([dose, text]) => ({ dose, text, used: used.has(dose) }))
+    .map(([dose, text]) => ({
+      dose,
+      text: doseNumber(data.notation ?? 'plain', text),
+      used: used.has(dose),
+    }))
     .sort((a, b) => a.dose - b.dose);
 }
 

@@ -1,4 +1,10 @@
+import { doseNumber } from '@/lib/design/dose-text';
 import type { CourseCohort, CourseData } from './course-data';
+
+/** A dose as the trial prints it, without its unit. */
+export function printed({ notation = 'plain' }: CourseData, dose: string | number): string {
+  return doseNumber(notation, String(dose));
+}
 
 /** A dose to three significant digits, for an estimate; whole numbers stay whole. */
 export function roundedDose(dose: string | number): string {
@@ -31,10 +37,12 @@ export function courseInWords(data: CourseData): string {
   const steps = data.cohorts.map((cohort) => {
     const outcomes = outcomesInWords(cohort, data.labels);
     const state = cohort.state === 'signed' ? '' : `, ${cohort.state.replaceAll('-', ' ')}`;
-    return `cohort ${cohort.number} at ${cohort.dose} ${data.unit}${state}${outcomes ? ` (${outcomes})` : ''}`;
+    return `cohort ${cohort.number} at ${printed(data, cohort.dose)} ${data.unit}${state}${outcomes ? ` (${outcomes})` : ''}`;
   });
   if (data.proposed) {
-    steps.push(`${data.proposed.dose} ${data.unit} proposed for cohort ${data.proposed.number}`);
+    steps.push(
+      `${printed(data, data.proposed.dose)} ${data.unit} proposed for cohort ${data.proposed.number}`,
+    );
   }
   const begun = steps.length === 0 ? 'no dose released yet' : steps.join('; ');
   const estimate = estimateInWords(data);

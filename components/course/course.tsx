@@ -6,7 +6,7 @@ import { wordOfState } from '../ui/chip';
 import type { CourseData, CourseShapes, CourseText } from './course-data';
 import { CourseFrame } from './course-frame';
 import { courseShapes, pathThrough, round } from './course-shapes';
-import { courseInWords, estimateInWords, outcomesInWords } from './course-words';
+import { courseInWords, estimateInWords, outcomesInWords, printed } from './course-words';
 
 function Text({ label, className }: { label: CourseText; className: string }) {
   return (
@@ -127,7 +127,7 @@ function rowsOf(data: CourseData): Row<'cohort' | 'dose' | 'state' | 'outcomes'>
     id: String(cohort.number),
     values: {
       cohort: cohort.number,
-      dose: String(cohort.dose),
+      dose: printed(data, cohort.dose),
       state: wordOfState(cohort.state),
       outcomes: outcomesInWords(cohort, data.labels),
     },
@@ -135,7 +135,10 @@ function rowsOf(data: CourseData): Row<'cohort' | 'dose' | 'state' | 'outcomes'>
   if (!data.proposed) return rows;
   const { number, dose } = data.proposed;
   const state = 'Proposed, not signed';
-  return [...rows, { id: 'proposed', values: { cohort: number, dose: String(dose), state, outcomes: '' } }];
+  return [
+    ...rows,
+    { id: 'proposed', values: { cohort: number, dose: printed(data, dose), state, outcomes: '' } },
+  ];
 }
 
 /**
@@ -173,7 +176,12 @@ export function Course({
                 caption={`Course of doses${estimate ? `; ${estimate}` : ''}`}
                 columns={[
                   { key: 'cohort', header: 'Cohort', rowHeader: true },
-                  { key: 'dose', header: 'Dose', unit: data.unit, kind: 'number' },
+                  {
+                    key: 'dose',
+                    header: 'Dose',
+                    unit: data.unit,
+                    ...(data.notation === 'powers-of-ten' ? {} : { kind: 'number' as const }),
+                  },
                   { key: 'state', header: 'State' },
                   ...(marked ? [{ key: 'outcomes' as const, header: 'Outcomes' }] : []),
                 ]}

@@ -19,7 +19,7 @@ export function ProportionSection({
   from,
   leftOut = null,
 }: {
-  design: Pick<Design, 'response' | 'target' | 'unit' | 'scale'>;
+  design: Pick<Design, 'response' | 'target' | 'unit' | 'scale' | 'doseNotation'>;
   proportions: readonly ProportionRow[];
   /** Which cohorts the counts are from, such as "signed cohorts". */
   from: string;
@@ -35,6 +35,7 @@ export function ProportionSection({
           target={design.target}
           unit={unitText(design.unit)}
           scale={design.scale}
+          notation={design.doseNotation}
           response={design.response.present}
           level={`95 % Wilson intervals, from ${from}`}
         />

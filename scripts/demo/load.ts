@@ -1,6 +1,8 @@
 import { playBrook07 } from './brook-07';
+import { playFord11 } from './ford-11';
 import { createDemoPeople, listDemoAccounts } from './people';
 import { DAY } from './play-trial';
+import { playSpring04 } from './spring-04';
 import { playWell02 } from './well-02';
 
 /**
@@ -10,6 +12,8 @@ import { playWell02 } from './well-02';
 export async function loadDemo(now = Date.now()): Promise<void> {
   const { people, sites } = await createDemoPeople(now - 230 * DAY);
   await playWell02(people, sites, now);
+  await playFord11(people, sites, now);
+  await playSpring04(people, sites, now);
   await playBrook07(people, sites, now);
   await listDemoAccounts(people);
 }

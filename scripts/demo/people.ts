@@ -11,9 +11,9 @@ import type { Player } from './play-trial';
 const DEMO_PASSWORD = 'quiet water below';
 
 const INVITED = {
-  aldermoor: ['lena.okoro', 'Lena Okoro', 'Site coordinator at Aldermoor (WELL-02, BROOK-07)'],
-  valk: ['piet.varga', 'Piet Varga', 'Site coordinator at the Valk Institute (WELL-02)'],
-  serafin: ['sunniva.hale', 'Sunniva Hale', 'Site coordinator at the Serafin Clinic (WELL-02)'],
+  aldermoor: ['lena.okoro', 'Lena Okoro', 'Site coordinator at Aldermoor Hospital'],
+  valk: ['piet.varga', 'Piet Varga', 'Site coordinator at the Valk Institute'],
+  serafin: ['sunniva.hale', 'Sunniva Hale', 'Site coordinator at the Serafin Clinic'],
   firstReviewer: ['ines.maartens', 'Dr Ines Maartens', 'Safety reviewer'],
   secondReviewer: ['oke.lindqvist', 'Dr Oke Lindqvist', 'Safety reviewer'],
   thirdReviewer: ['mira.castellan', 'Dr Mira Castellan', 'Safety reviewer'],

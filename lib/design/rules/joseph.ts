@@ -116,9 +116,12 @@ function gainLines(
     {
       ...shared,
       id: 'prior-variance',
-      symbol: { name: 'τ²', index: k },
-      formula: 'β_[P] = {slope}, next {after}',
-      numbers: { slope: exact(settings.slope, 'β_P'), after: computed(r[JOSEPH.TAU2] as number, 'τ²') },
+      formula: 'τ²_{k}; after this step τ²_{next} = {after}',
+      numbers: {
+        k: exact(k),
+        next: exact(k + 1),
+        after: computed(r[JOSEPH.TAU2] as number, 'τ²'),
+      },
       result: computed(r[JOSEPH.TAU2_BEFORE] as number, 'τ²'),
     },
     {

@@ -1,8 +1,8 @@
+import { doseNumber, doseText } from '@/lib/design/dose-text';
 import { standingHalt, submittedVersion, draftVersion, versionInForce } from '@/lib/conduct/trial-facts';
 import type { TrialLife } from '@/lib/conduct/state';
 import { ROLE_NAMES } from '@/lib/policy/roles';
 import type { Design } from '@/lib/schemas/design';
-import { unitText } from '@/lib/schemas/units';
 import { courseOfDoses, type CourseView } from './course-of-doses';
 import { readerTrial, type TrialReader } from './reader-trial';
 
@@ -52,10 +52,9 @@ export async function trialHeader(reader: TrialReader, code: string): Promise<Tr
 }
 
 function summaryOf({ design, number }: { design: Design; number: number }): string {
-  const unit = unitText(design.unit);
   const doses =
     design.doses.kind === 'levels'
-      ? `levels ${design.doses.levels[0]} to ${design.doses.levels.at(-1)} ${unit}`
-      : `${design.doses.lowest} to ${design.doses.highest} ${unit} by ${design.doses.increment}`;
+      ? `levels ${doseNumber(design.doseNotation, design.doses.levels[0] ?? '')} to ${doseText(design, design.doses.levels.at(-1) ?? '')}`
+      : `${doseNumber(design.doseNotation, design.doses.lowest)} to ${doseText(design, design.doses.highest)} by ${doseNumber(design.doseNotation, design.doses.increment)}`;
   return `Target ${design.target} ${design.response.present} · cohorts of ${design.cohortSize} · ${doses} · design version ${number}`;
 }

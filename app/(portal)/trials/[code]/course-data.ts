@@ -8,6 +8,7 @@ export function courseData(view: CourseView): CourseData {
   return {
     unit: unitText(view.unit),
     scale: view.scale,
+    notation: view.doseNotation,
     ...(doses.kind === 'levels'
       ? { levels: doses.levels }
       : { range: { minimum: doses.lowest, maximum: doses.highest } }),
