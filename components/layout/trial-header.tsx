@@ -27,7 +27,7 @@ export function TrialHeader({
   tabs?: ReactNode;
 }) {
   return (
-    <div className="border-b border-line bg-stone print:bg-transparent">
+    <section aria-label={`Trial ${code}`} className="border-b border-line bg-stone print:bg-transparent">
       <div className="grid grid-cols-[minmax(0,1fr)] gap-x-6 gap-y-4 px-4 pt-4 md:grid-cols-[330px_minmax(0,1fr)] md:px-8 md:pt-5 print:px-0">
         <div>
           <p className="flex flex-wrap items-center gap-x-3 gap-y-1">
@@ -41,6 +41,6 @@ export function TrialHeader({
         {course ? <div className="min-w-0">{course}</div> : null}
       </div>
       <div className="px-4 pt-1 md:px-8 md:pt-3 print:hidden">{tabs}</div>
-    </div>
+    </section>
   );
 }

@@ -295,7 +295,12 @@ it('everyone but the administrator halts in two clicks; the quorum lifts; the tr
       await visit(page, `/trials/${TRIAL}/trail`);
       await page.getByText('The chain is whole.').waitFor();
       await expectAccessible(page);
-      const text = await page.locator('main').innerText();
+      let text = await page.locator('main').innerText();
+      const older = page.getByRole('link', { name: 'Older' });
+      while (await older.isVisible()) {
+        await visit(page, (await older.getAttribute('href')) ?? '');
+        text += await page.locator('main').innerText();
+      }
       for (const part of [
         `Trial ${TRIAL} created`,
         'Design approved',

@@ -21,7 +21,12 @@ export interface TrailEntry {
 /** The trail of a trial, newest first, with the verdict on its chain. */
 export interface TrailView {
   readonly code: string;
+  /** The events of the page asked for. */
   readonly entries: readonly TrailEntry[];
+  /** All events of the chain; every one of them was verified. */
+  readonly count: number;
+  readonly page: number;
+  readonly pages: number;
   readonly head: string;
   readonly firstBreak: ChainBreak | null;
 }
@@ -36,8 +41,14 @@ interface EventRow extends ChainLink {
 
 const isTrialRole = (role: string): role is TrialRole => role in ROLE_NAMES;
 
-/** The trail of a trial for a reader, verified as it is read; null when the trial or the page is not theirs. */
-export async function trailPage(reader: TrialReader, code: string): Promise<TrailView | null> {
+/** Events shown at once; the chain is verified whole whatever is shown. */
+export const TRAIL_PAGE = 50;
+
+/**
+ * The trail of a trial for a reader, verified as it is read; null when the trial or the page is not theirs.
+ * @param asked the page, from 1 with the newest events; one that is not there becomes the nearest
+ */
+export async function trailPage(reader: TrialReader, code: string, asked = 1): Promise<TrailView | null> {
   const trial = await readerTrial(reader, code);
   if (trial === null || !trial.may('trail.read')) return null;
   const { state, people, sites } = trial.loaded;
@@ -69,7 +80,10 @@ export async function trailPage(reader: TrialReader, code: string): Promise<Trai
     recommendation: (id) => state.recommendations[id]?.number ?? null,
     design: Object.values(state.designVersions)[0]?.design ?? null,
   };
-  const entries = rows.map((row): TrailEntry => {
+  const pages = Math.max(1, Math.ceil(rows.length / TRAIL_PAGE));
+  const page = Math.min(Math.max(1, asked), pages);
+  const end = rows.length - (page - 1) * TRAIL_PAGE;
+  const entries = rows.slice(Math.max(0, end - TRAIL_PAGE), end).map((row): TrailEntry => {
     const parsed = row.payload === null ? null : trialEventSchema.safeParse(JSON.parse(row.payload));
     return {
       sequence: row.sequence,
@@ -84,6 +98,9 @@ export async function trailPage(reader: TrialReader, code: string): Promise<Trai
   return {
     code: state.trial.code,
     entries: entries.reverse(),
+    count: rows.length,
+    page,
+    pages,
     head: head.hash,
     firstBreak: verifyChain(links, head, sha256),
   };
