@@ -14,26 +14,6 @@ export function SkeletonText({ lines = 3 }: { lines?: number }) {
   );
 }
 
-/** A table that is on its way, with its number of rows and columns. */
-export function SkeletonTable({ rows = 5, columns = 4 }: { rows?: number; columns?: number }) {
-  return (
-    <div role="status" className="animate-pulse">
-      <span className="sr-only">Loading</span>
-      {Array.from({ length: rows + 1 }, (_, row) => (
-        <div
-          key={row}
-          aria-hidden="true"
-          className={`flex gap-6 py-2.75 ${row === 0 ? 'border-b border-ink-soft' : 'border-b border-line'}`}
-        >
-          {Array.from({ length: columns }, (_, column) => (
-            <span key={column} className="h-3.5 flex-1 rounded-sm bg-line/60" />
-          ))}
-        </div>
-      ))}
-    </div>
-  );
-}
-
 /** A drawing or chart that is on its way. */
 export function SkeletonFigure() {
   return (

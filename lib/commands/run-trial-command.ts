@@ -14,6 +14,7 @@ import { SIGNED_COMMANDS } from '@/lib/schemas/trial-inputs';
 import { SOFTWARE_VERSION } from '@/lib/software-version';
 import { appendToChain, type ChainHead } from './append-to-chain';
 import { checkTeamChange } from './check-team-change';
+import { commandTime } from './command-time';
 import type { ProvenIdentity } from './prove-identity';
 import { queueMails } from './queue-mails';
 import { saveTrialState } from './save-trial-state';
@@ -67,11 +68,6 @@ async function lockTrial(trialCode: string): Promise<LockedTrial> {
   return trial;
 }
 
-/** The time of the command, read after the lock: never before the last link of the trial's chain. */
-export function commandTime(clock: number, offset: number, chainTime: Date | null): string {
-  return new Date(Math.max(clock + Number(offset), chainTime?.getTime() ?? 0)).toISOString();
-}
-
 async function actorOf(request: TrialCommandRequest, state: TrialState): Promise<DecisionActor> {
   const person = await models().Person.findByPk(request.personId);
   if (!person || person.state !== 'active') throw notFound('This trial');
@@ -92,7 +88,7 @@ async function actorOf(request: TrialCommandRequest, state: TrialState): Promise
 }
 
 /** Queues the mails that events bring about; each carries the chain's head after them. */
-export async function queueNotices(
+async function queueNotices(
   events: readonly TrialEvent[],
   state: TrialState,
   people: Readonly<Record<string, DirectoryEntry>>,

@@ -25,11 +25,6 @@ export function currentCohort(state: TrialState): Cohort | null {
   );
 }
 
-/** The last cohort by number, or null before the first release. */
-export function lastCohort(state: TrialState): Cohort | null {
-  return cohortsInOrder(state).at(-1) ?? null;
-}
-
 /** Subjects holding a place in a cohort, by place. */
 export function placesOf(state: TrialState, cohortId: string): Subject[] {
   return values(state.subjects)

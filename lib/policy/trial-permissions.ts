@@ -1,4 +1,4 @@
-import { type Actor, membershipIn, type TrialRole } from './roles';
+import type { TrialRole } from './roles';
 
 /**
  * What may be done in a trial, and by which of its roles. Anything not listed is refused. Conditions that
@@ -27,10 +27,4 @@ export type TrialPermission = keyof typeof TRIAL_PERMISSIONS;
 /** True when a role of a trial carries the permission. */
 export function roleMay(role: TrialRole, permission: TrialPermission): boolean {
   return (TRIAL_PERMISSIONS[permission] as readonly TrialRole[]).includes(role);
-}
-
-/** True when the actor's standing role in the trial carries the permission. */
-export function mayInTrial(actor: Actor, trialId: string, permission: TrialPermission): boolean {
-  const membership = membershipIn(actor, trialId);
-  return membership !== null && roleMay(membership.role, permission);
 }

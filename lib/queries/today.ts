@@ -231,6 +231,24 @@ function linesFor(
   return [];
 }
 
+function trialLine(reader: TrialReader, trial: TrialFactsRow): TrialLine {
+  const role = reader.memberships.find(({ trialId }) => trialId === trial.id)?.role;
+  return {
+    code: trial.code,
+    title: trial.title,
+    state: trial.state,
+    roleName: role ? ROLE_NAMES[role] : '',
+    cohortNumber: trial.cohortNumber,
+    cohortState: trial.cohortState,
+  };
+}
+
+/** The trials a reader has a role in. One statement. */
+export async function readersTrials(reader: TrialReader): Promise<TrialLine[]> {
+  if (reader.memberships.length === 0) return [];
+  return (await trialRows(reader)).map((trial) => trialLine(reader, trial));
+}
+
 /** What waits for a reader in all their trials, and those trials. Two statements. */
 export async function today(reader: TrialReader): Promise<TodayView> {
   if (reader.memberships.length === 0) return { waiting: [], trials: [] };
@@ -247,16 +265,6 @@ export async function today(reader: TrialReader): Promise<TodayView> {
   });
   return {
     waiting: waiting.sort((a, b) => Number(b.isOverdue) - Number(a.isOverdue)),
-    trials: trials.map((trial) => {
-      const role = roleOf.get(trial.id);
-      return {
-        code: trial.code,
-        title: trial.title,
-        state: trial.state,
-        roleName: role ? ROLE_NAMES[role] : '',
-        cohortNumber: trial.cohortNumber,
-        cohortState: trial.cohortState,
-      };
-    }),
+    trials: trials.map((trial) => trialLine(reader, trial)),
   };
 }

@@ -39,6 +39,7 @@ interface ChainRow {
   hash: string;
   salt: string | null;
   payload: string | null;
+  printedName: string | null;
 }
 
 /** Head, links and payloads come with one statement: a command that commits in between cannot look like a break. */
@@ -48,18 +49,28 @@ function chainSql(isInstallation: boolean): string {
     : ['trials', 'h.code', 'h.id = :chain'];
   return `SELECT ${name} AS name, h.chain_sequence AS headSequence, h.chain_head AS head,
       e.id, e.chain, e.sequence, e.occurred_at AS occurredAt, e.person_id AS personId, e.role, e.kind,
-      e.payload_digest AS payloadDigest, e.previous_hash AS previousHash, e.hash, p.salt, p.payload
+      e.payload_digest AS payloadDigest, e.previous_hash AS previousHash, e.hash, p.salt, p.payload,
+      n.printed_name AS printedName
     FROM ${table} h
     LEFT JOIN events e ON e.chain = :chain
     LEFT JOIN event_payloads p ON p.event_id = e.id
+    LEFT JOIN people n ON n.id = e.person_id
     WHERE ${condition} ORDER BY e.sequence`;
 }
 
-type StoredLink = ChainLink & { readonly stored: LinkPayload | null };
+/** A link with what it says, where that still stands. */
+export type StoredLink = ChainLink & { readonly stored: LinkPayload | null };
+
+/** A chain as stored: its links, the names of who acted (by the person's id), and the verdict on it. */
+export interface StoredChain {
+  readonly links: readonly StoredLink[];
+  readonly printedNames: ReadonlyMap<string, string>;
+  readonly verdict: ChainVerdict;
+}
 
 function linkOf(row: ChainRow): StoredLink | null {
   if (row.id === null) return null;
-  const { name: _name, headSequence: _sequence, head: _head, salt, payload, ...link } = row;
+  const { name: _name, headSequence: _sequence, head: _head, printedName: _by, salt, payload, ...link } = row;
   return {
     ...link,
     id: row.id,
@@ -71,9 +82,9 @@ function linkOf(row: ChainRow): StoredLink | null {
 /**
  * Loads a chain of the trail with its payloads and verifies it from its first link to its head, in one statement.
  * @param chain a trial's id, or "installation"
- * @returns the verdict, or null when there is no such chain
+ * @returns the chain with the verdict on it, or null when there is none
  */
-export async function verifyStoredChain(chain: string): Promise<ChainVerdict | null> {
+export async function storedChain(chain: string): Promise<StoredChain | null> {
   const rows = await sequelize().query<ChainRow>(chainSql(chain === INSTALLATION_CHAIN), {
     type: QueryTypes.SELECT,
     replacements: { chain },
@@ -81,14 +92,28 @@ export async function verifyStoredChain(chain: string): Promise<ChainVerdict | n
   const first = rows[0];
   if (first === undefined) return null;
   const links = rows.map(linkOf).filter((link) => link !== null);
+  const printedNames = new Map(
+    rows.flatMap(({ personId, printedName }) =>
+      personId !== null && printedName !== null ? [[personId, printedName] as const] : [],
+    ),
+  );
   return {
-    chain,
-    name: first.name,
-    events: links.length,
-    head: first.head,
-    lastEventAt: links.at(-1)?.occurredAt ?? null,
-    firstBreak: verifyChain(links, { sequence: first.headSequence, hash: first.head }, sha256),
+    links,
+    printedNames,
+    verdict: {
+      chain,
+      name: first.name,
+      events: links.length,
+      head: first.head,
+      lastEventAt: links.at(-1)?.occurredAt ?? null,
+      firstBreak: verifyChain(links, { sequence: first.headSequence, hash: first.head }, sha256),
+    },
   };
+}
+
+/** The verdict on a chain, or null when there is no such chain. */
+export async function verifyStoredChain(chain: string): Promise<ChainVerdict | null> {
+  return (await storedChain(chain))?.verdict ?? null;
 }
 
 /** The verdict on events whose trial is gone: its row was removed by somebody with wider rights. */

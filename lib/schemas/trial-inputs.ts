@@ -76,6 +76,21 @@ export const subjectCodeSchema = z
       'A subject code is the site’s code, a hyphen and a number, such as ALD-014: no name, no birth date.',
   });
 
+const outcomeFields = {
+  outcome: z.enum(['present', 'absent'], { error: 'Choose the outcome.' }),
+  onsetAt: instantSchema.nullable().default(null),
+};
+
+/** An outcome that is present has a time when it began. */
+function checkOnset(
+  input: { readonly outcome: 'present' | 'absent'; readonly onsetAt: string | null },
+  context: z.RefinementCtx,
+): void {
+  if (input.outcome === 'present' && input.onsetAt === null) {
+    context.addIssue({ code: 'custom', path: ['onsetAt'], message: 'Enter when it began.' });
+  }
+}
+
 /** The input of every command of a trial, keyed by the command's type. */
 export const trialInputSchemas = {
   'save-design': z.strictObject({ design: designSchema }),
@@ -123,27 +138,17 @@ export const trialInputSchemas = {
   'record-outcome': z
     .strictObject({
       subjectId: idSchema,
-      outcome: z.enum(['present', 'absent'], { error: 'Choose the outcome.' }),
-      onsetAt: instantSchema.nullable().default(null),
+      ...outcomeFields,
     })
-    .superRefine((input, context) => {
-      if (input.outcome === 'present' && input.onsetAt === null) {
-        context.addIssue({ code: 'custom', path: ['onsetAt'], message: 'Enter when it began.' });
-      }
-    }),
+    .superRefine(checkOnset),
   'correct-outcome': z
     .strictObject({
       subjectId: idSchema,
       seenRevision: z.number().int().min(1),
-      outcome: z.enum(['present', 'absent'], { error: 'Choose the outcome.' }),
-      onsetAt: instantSchema.nullable().default(null),
+      ...outcomeFields,
       reason: shortReasonSchema,
     })
-    .superRefine((input, context) => {
-      if (input.outcome === 'present' && input.onsetAt === null) {
-        context.addIssue({ code: 'custom', path: ['onsetAt'], message: 'Enter when it began.' });
-      }
-    }),
+    .superRefine(checkOnset),
   'resubmit-cohort': z.strictObject({ cohortId: idSchema }),
   'add-site': z.strictObject({ siteId: chosenIdSchema('Choose a site.') }),
   'grant-membership': z.strictObject({

@@ -7,7 +7,6 @@ import { isSeenDue } from '@/lib/policy/session-times';
 import { tokenDigest } from '@/lib/auth/tokens';
 import { touchSession } from '@/lib/commands/end-session';
 import { mayInInstallation, type InstallationPermission } from '@/lib/policy/installation-permissions';
-import { roleMay, type TrialPermission } from '@/lib/policy/trial-permissions';
 import { sessionReader, type Reader, type ReaderMembership } from '@/lib/queries/session-reader';
 import { sessionToken } from './session-cookie';
 
@@ -51,20 +50,6 @@ export async function requireReader(): Promise<Reader> {
 /** The reader's standing membership in the trial of this code, or null. */
 export function membershipByCode(reader: Reader, trialCode: string): ReaderMembership | null {
   return reader.memberships.find((membership) => membership.trialCode === trialCode) ?? null;
-}
-
-/**
- * The reader of a page of a trial, with the role they have in it. A trial that does not exist, one of others, and a page
- * that is not for the role look alike: not found.
- */
-export async function requireTrialReader(
-  trialCode: string,
-  permission: TrialPermission,
-): Promise<{ reader: Reader; membership: ReaderMembership }> {
-  const reader = await requireReader();
-  const membership = membershipByCode(reader, trialCode);
-  if (membership === null || !roleMay(membership.role, permission)) notFound();
-  return { reader, membership };
 }
 
 /** The reader of a page of the administration; for everybody else it does not exist. */

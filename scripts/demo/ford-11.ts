@@ -1,39 +1,20 @@
-import { createTrial } from '@/lib/commands/installation/create-trial';
-import { newId } from '@/lib/hash';
 import { designDefaults } from '@/lib/schemas/design-defaults';
 import type { DemoPeople, DemoSites } from './people';
-import { DAY, HOUR, type PlayedSubject, TrialPlay } from './play-trial';
+import { DAY, HOUR, type PlayedSubject } from './play-trial';
+import { startTrial } from './start-trial';
 
 /**
  * An invented controlled human infection study: the inoculum, in colony-forming units, at which six of ten volunteers are
  * infected; levels a power of ten apart, cohorts of four, virtual observations. The third cohort is in its window.
  */
 export async function playFord11(people: DemoPeople, sites: DemoSites, now: number): Promise<void> {
-  const start = now - 52 * DAY;
-  await createTrial(
-    { personId: people.administrator.personId, submissionKey: newId(), clock: () => start },
-    {
-      code: 'FORD-11',
-      title: 'Inoculum of strain QX5 in healthy volunteers',
-      statisticianId: people.statistician.personId,
-    },
-  );
-  const trial = new TrialPlay('FORD-11', start);
-  await trial.run(people.administrator, 'add-site', { siteId: sites.valk });
-  await trial.run(people.administrator, 'grant-membership', {
-    personId: people.valk.personId,
-    role: 'coordinator',
-    siteIds: [sites.valk],
-  });
-  for (const role of ['firstReviewer', 'thirdReviewer'] as const) {
-    await trial.run(people.administrator, 'grant-membership', {
-      personId: people[role].personId,
-      role: 'reviewer',
-    });
-  }
-  await trial.run(people.administrator, 'grant-membership', {
-    personId: people.sponsor.personId,
-    role: 'sponsor',
+  const trial = await startTrial(people, sites, {
+    code: 'FORD-11',
+    title: 'Inoculum of strain QX5 in healthy volunteers',
+    start: now - 52 * DAY,
+    sites: ['valk'],
+    reviewers: ['firstReviewer', 'thirdReviewer'],
+    hasSponsor: true,
   });
   trial.pass(4 * DAY);
   await trial.design(people.statistician, people.firstReviewer, {

@@ -1,8 +1,7 @@
-import { createTrial } from '@/lib/commands/installation/create-trial';
-import { newId } from '@/lib/hash';
 import { designDefaults } from '@/lib/schemas/design-defaults';
 import type { DemoPeople, DemoSites } from './people';
-import { DAY, HOUR, type PlayedSubject, TrialPlay } from './play-trial';
+import { DAY, HOUR, type PlayedSubject } from './play-trial';
+import { startTrial } from './start-trial';
 
 /**
  * An invented ED90 study: the volume of a local anaesthetic at which nine of ten blocks succeed, in steps of 0.5 mL,
@@ -18,34 +17,17 @@ export async function playSpring04(people: DemoPeople, sites: DemoSites, now: nu
     [true, true],
     [true, true],
   ];
-  const start = now - 17 * DAY;
-  await createTrial(
-    { personId: people.administrator.personId, submissionKey: newId(), clock: () => start },
-    {
-      code: 'SPRING-04',
-      title: 'Volume of AN-207 for a block at the ankle',
-      statisticianId: people.statistician.personId,
-    },
-  );
-  const trial = new TrialPlay('SPRING-04', start);
   const atSites = [
     { role: 'aldermoor', code: 'ALD' },
     { role: 'serafin', code: 'SRF' },
   ] as const;
-  for (const { role } of atSites) {
-    await trial.run(people.administrator, 'add-site', { siteId: sites[role] });
-    await trial.run(people.administrator, 'grant-membership', {
-      personId: people[role].personId,
-      role: 'coordinator',
-      siteIds: [sites[role]],
-    });
-  }
-  for (const role of ['firstReviewer', 'secondReviewer', 'thirdReviewer'] as const) {
-    await trial.run(people.administrator, 'grant-membership', {
-      personId: people[role].personId,
-      role: 'reviewer',
-    });
-  }
+  const trial = await startTrial(people, sites, {
+    code: 'SPRING-04',
+    title: 'Volume of AN-207 for a block at the ankle',
+    start: now - 17 * DAY,
+    sites: ['aldermoor', 'serafin'],
+    reviewers: ['firstReviewer', 'secondReviewer', 'thirdReviewer'],
+  });
   trial.pass(2 * DAY);
   await trial.design(people.statistician, people.thirdReviewer, {
     ...designDefaults('range'),

@@ -1,43 +1,20 @@
-import { createTrial } from '@/lib/commands/installation/create-trial';
-import { newId } from '@/lib/hash';
 import { designDefaults } from '@/lib/schemas/design-defaults';
 import type { DemoPeople, DemoSites } from './people';
-import { DAY, HOUR, type PlayedSubject, TrialPlay } from './play-trial';
+import { DAY, HOUR, type PlayedSubject } from './play-trial';
+import { startTrial } from './start-trial';
 
 /**
  * An invented first-in-human oncology trial: six levels in mg, target 0.25 dose-limiting toxicity, cohorts of three,
  * logarithmic scale, three sites. Half way through: cohort 5 of 10 is open and one outcome is due.
  */
 export async function playWell02(people: DemoPeople, sites: DemoSites, now: number): Promise<void> {
-  const start = now - 194 * DAY;
-  await createTrial(
-    { personId: people.administrator.personId, submissionKey: newId(), clock: () => start },
-    {
-      code: 'WELL-02',
-      title: 'Oral KB-318 in refractory solid tumours',
-      statisticianId: people.statistician.personId,
-    },
-  );
-  const trial = new TrialPlay('WELL-02', start);
-  for (const siteId of Object.values(sites)) {
-    await trial.run(people.administrator, 'add-site', { siteId });
-  }
-  for (const role of ['aldermoor', 'valk', 'serafin'] as const) {
-    await trial.run(people.administrator, 'grant-membership', {
-      personId: people[role].personId,
-      role: 'coordinator',
-      siteIds: [sites[role]],
-    });
-  }
-  for (const role of ['firstReviewer', 'secondReviewer', 'thirdReviewer'] as const) {
-    await trial.run(people.administrator, 'grant-membership', {
-      personId: people[role].personId,
-      role: 'reviewer',
-    });
-  }
-  await trial.run(people.administrator, 'grant-membership', {
-    personId: people.sponsor.personId,
-    role: 'sponsor',
+  const trial = await startTrial(people, sites, {
+    code: 'WELL-02',
+    title: 'Oral KB-318 in refractory solid tumours',
+    start: now - 194 * DAY,
+    sites: ['aldermoor', 'valk', 'serafin'],
+    reviewers: ['firstReviewer', 'secondReviewer', 'thirdReviewer'],
+    hasSponsor: true,
   });
   trial.pass(6 * DAY);
   await trial.design(people.statistician, people.firstReviewer, {

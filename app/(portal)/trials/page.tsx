@@ -5,7 +5,7 @@ import { PageTitle } from '@/components/layout/page-title';
 import { Sheet } from '@/components/layout/sheet';
 import { DataTable } from '@/components/tables/data-table';
 import { EmptyState } from '@/components/ui/empty-state';
-import { today } from '@/lib/queries/today';
+import { readersTrials } from '@/lib/queries/today';
 import { requireReader } from '@/lib/server/session';
 
 export const metadata: Metadata = { title: 'Trials' };
@@ -13,7 +13,7 @@ export const metadata: Metadata = { title: 'Trials' };
 /** The reader's trials. */
 export default async function TrialsPage() {
   const reader = await requireReader();
-  const { trials } = await today(reader);
+  const trials = await readersTrials(reader);
   return (
     <Sheet caution={<Caution />}>
       <PageTitle lede="The trials you have a role in.">Trials</PageTitle>

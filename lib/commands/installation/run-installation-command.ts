@@ -12,8 +12,8 @@ import { notFound } from '@/lib/errors';
 import { newId } from '@/lib/hash';
 import { type InstallationPermission, mayInInstallation } from '@/lib/policy/installation-permissions';
 import { appendToChain } from '../append-to-chain';
+import { commandTime } from '../command-time';
 import { type QueuedMail, queueMails } from '../queue-mails';
-import { commandTime } from '../run-trial-command';
 import { storeSubmission, submissionResult } from '../submissions';
 import { type EventDetails, saveInstallationEvents } from './save-installation-events';
 

@@ -70,11 +70,6 @@ export function doseSegments(dose: Dose, notation: Design['doseNotation']): Segm
   return power.mantissa === '1' ? [text('10'), exponent] : [text(`${power.mantissa} × 10`), exponent];
 }
 
-/** An exact dose with its unit. */
-export function doseWithUnitSegments(dose: Dose, context: PrintContext): Segment[] {
-  return [...doseSegments(dose, context.notation), text(`\u00a0${context.unit}`)];
-}
-
 /** Digits of a number of a trace, without unit. */
 export function numberSegments(number: TraceNumber, context: PrintContext): Segment[] {
   const { value, form } = number;

@@ -1,4 +1,4 @@
-import type { LineId, ReasonCode, ResultWord, StopReason } from './line';
+import type { LineId, ReasonCode, ResultWord } from './line';
 
 /** Labels of the lines. `next` and its like are followed by the unit of the working scale. */
 export const LINE_LABELS: Readonly<Record<LineId, string>> = {
@@ -91,8 +91,3 @@ export const REASON_SENTENCES: Readonly<Record<ReasonCode, string>> = {
   repeated: 'The same dose was recommended often enough, and enough subjects were given it.',
   precision: 'The target dose is estimated as precisely as was asked for.',
 };
-
-/** The reasons to stop, as sentences. */
-export function stopSentence(reason: StopReason): string {
-  return REASON_SENTENCES[reason];
-}

@@ -85,6 +85,8 @@ export interface LiftView {
   /** The open cohort the plan is for; null when none is open. */
   readonly cohortNumber: number | null;
   readonly signatures: readonly StandingSignature[];
+  /** Signatures of others that stand on each plan, the reader's own left out. */
+  readonly standing: Readonly<Record<'continue' | 'close-short', number>>;
   readonly sign: { readonly why: string | null } | null;
 }
 
@@ -199,18 +201,22 @@ function packetOf(trial: ReaderTrial, readerId: string): PacketView | null {
   };
 }
 
-function liftOf(trial: ReaderTrial): LiftView | null {
+function liftOf(trial: ReaderTrial, readerId: string): LiftView | null {
   const { state, people } = trial.loaded;
   const halt = standingHalt(state);
   if (halt === null) return null;
   const cohort = currentCohort(state);
+  const signatures = standingSignatures(state, halt.id);
+  const othersOn = (plan: 'continue' | 'close-short') =>
+    signatures.filter((each) => each.personId !== readerId && each.decision === plan).length;
   return {
     haltId: halt.id,
     reason: halt.reason,
     haltedAt: halt.haltedAt,
     haltedBy: halt.haltedBy ? (people[halt.haltedBy]?.printedName ?? null) : null,
     cohortNumber: cohort?.state === 'open' && !cohort.isRecordsOnly ? cohort.number : null,
-    signatures: standingSignatures(state, halt.id).map(standing),
+    signatures: signatures.map(standing),
+    standing: { continue: othersOn('continue'), 'close-short': othersOn('close-short') },
     sign: trial.offers.lift ?? null,
   };
 }
@@ -254,7 +260,7 @@ export async function reviewPage(reader: TrialReader, code: string): Promise<Rev
   if (trial === null || !trial.may('recommendation.read')) return null;
   const { state } = trial.loaded;
   const packet = packetOf(trial, reader.personId);
-  const lift = liftOf(trial);
+  const lift = liftOf(trial, reader.personId);
   return {
     trialCode: state.trial.code,
     quorum: state.trial.quorum,

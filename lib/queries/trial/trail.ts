@@ -1,9 +1,7 @@
-import { QueryTypes } from 'sequelize';
-import { type ChainBreak, type ChainLink, verifyChain } from '@/lib/conduct/chain';
+import type { ChainBreak } from '@/lib/conduct/chain';
 import { trialEventSchema, type TrialEventPayload } from '@/lib/conduct/events';
-import { sequelize } from '@/lib/db/connection';
-import { sha256 } from '@/lib/hash';
 import { ROLE_NAMES, type TrialRole } from '@/lib/policy/roles';
+import { storedChain } from '../verify-chain';
 import { readerTrial, type TrialReader } from './reader-trial';
 import { type EventNames, eventInWords } from './event-in-words';
 
@@ -31,14 +29,6 @@ export interface TrailView {
   readonly firstBreak: ChainBreak | null;
 }
 
-interface EventRow extends ChainLink {
-  salt: string | null;
-  payload: string | null;
-  printedName: string | null;
-  headSequence: number;
-  head: string;
-}
-
 const isTrialRole = (role: string): role is TrialRole => role in ROLE_NAMES;
 
 /** Events shown at once; the chain is verified whole whatever is shown. */
@@ -52,26 +42,9 @@ export async function trailPage(reader: TrialReader, code: string, asked = 1): P
   const trial = await readerTrial(reader, code);
   if (trial === null || !trial.may('trail.read')) return null;
   const { state, people, sites } = trial.loaded;
-  const rows = await sequelize().query<Omit<EventRow, 'occurredAt'> & { occurredAt: Date }>(
-    `SELECT e.id, e.chain, e.sequence, e.occurred_at AS occurredAt, e.person_id AS personId, e.role, e.kind,
-       e.payload_digest AS payloadDigest, e.previous_hash AS previousHash, e.hash, p.salt, p.payload,
-       n.printed_name AS printedName, t.chain_sequence AS headSequence, t.chain_head AS head
-     FROM trials t
-     JOIN events e ON e.chain = t.id
-     LEFT JOIN event_payloads p ON p.event_id = e.id
-     LEFT JOIN people n ON n.id = e.person_id
-     WHERE t.id = :trialId ORDER BY e.sequence`,
-    { type: QueryTypes.SELECT, replacements: { trialId: state.trial.id } },
-  );
-  const first = rows[0];
-  const links = rows.map(
-    ({ salt, payload, printedName: _name, headSequence: _sequence, head: _head, ...link }) => ({
-      ...link,
-      occurredAt: link.occurredAt.toISOString(),
-      stored: salt === null || payload === null ? null : { salt, payload },
-    }),
-  );
-  const head = { sequence: first?.headSequence ?? 0, hash: first?.head ?? '' };
+  const chain = await storedChain(state.trial.id);
+  if (chain === null) return null;
+  const { links, printedNames, verdict } = chain;
   const names: EventNames = {
     person: (id) => people[id]?.printedName ?? 'a person',
     site: (id) => sites[id]?.name ?? 'a site',
@@ -80,28 +53,28 @@ export async function trailPage(reader: TrialReader, code: string, asked = 1): P
     recommendation: (id) => state.recommendations[id]?.number ?? null,
     design: Object.values(state.designVersions)[0]?.design ?? null,
   };
-  const pages = Math.max(1, Math.ceil(rows.length / TRAIL_PAGE));
+  const pages = Math.max(1, Math.ceil(links.length / TRAIL_PAGE));
   const page = Math.min(Math.max(1, asked), pages);
-  const end = rows.length - (page - 1) * TRAIL_PAGE;
-  const entries = rows.slice(Math.max(0, end - TRAIL_PAGE), end).map((row): TrailEntry => {
-    const parsed = row.payload === null ? null : trialEventSchema.safeParse(JSON.parse(row.payload));
+  const end = links.length - (page - 1) * TRAIL_PAGE;
+  const entries = links.slice(Math.max(0, end - TRAIL_PAGE), end).map((link): TrailEntry => {
+    const parsed = link.stored === null ? null : trialEventSchema.safeParse(JSON.parse(link.stored.payload));
     return {
-      sequence: row.sequence,
-      occurredAt: row.occurredAt.toISOString(),
-      person: row.printedName ?? 'The server',
-      role: isTrialRole(row.role) || row.role === 'administrator' ? ROLE_NAMES[row.role] : '',
-      kind: row.kind as TrialEventPayload['kind'],
+      sequence: link.sequence,
+      occurredAt: link.occurredAt,
+      person: printedNames.get(link.personId ?? '') ?? 'The server',
+      role: isTrialRole(link.role) || link.role === 'administrator' ? ROLE_NAMES[link.role] : '',
+      kind: link.kind as TrialEventPayload['kind'],
       what: parsed?.success ? eventInWords(parsed.data, names) : 'What this event says cannot be read.',
-      hash: row.hash,
+      hash: link.hash,
     };
   });
   return {
     code: state.trial.code,
     entries: entries.reverse(),
-    count: rows.length,
+    count: links.length,
     page,
     pages,
-    head: head.hash,
-    firstBreak: verifyChain(links, head, sha256),
+    head: verdict.head,
+    firstBreak: verdict.firstBreak,
   };
 }

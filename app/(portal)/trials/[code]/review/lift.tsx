@@ -16,9 +16,6 @@ export function Lift({
   trial: ReviewView;
   printedName: string;
 }) {
-  const others = view.signatures.filter((signature) => signature.printedName !== printedName);
-  const on = (plan: 'continue' | 'close-short') =>
-    others.filter((signature) => signature.decision === plan).length;
   return (
     <>
       <PageTitle
@@ -51,7 +48,7 @@ export function Lift({
             haltId={view.haltId}
             cohortNumber={view.cohortNumber}
             printedName={printedName}
-            standing={{ continue: on('continue'), 'close-short': on('close-short') }}
+            standing={view.standing}
             quorum={trial.quorum}
             action={signLift}
           />
